@@ -2,6 +2,7 @@
  * Reads the bytes of a delimited file before any parser does. A parser given a binary file, an endless
  * line or a quote that never closes gathers the rest of the file into one cell; this stops at the place.
  */
+import { isUtf8 } from 'node:buffer';
 import { Transform, type TransformCallback } from 'node:stream';
 import { FileProblem } from './file-problem.ts';
 
@@ -130,20 +131,23 @@ export class ByteScanner extends Transform {
 
 function placeOfInvalidUtf8(bytes: Buffer, lineAtStart: number): { line: number; column: number } {
   let line = lineAtStart;
+  // A character may have begun in the piece before: its remaining bytes are none of this piece's faults.
   let start = 0;
-  for (let index = 0; index <= bytes.length; index += 1) {
+  while (start < 3 && isContinuation(bytes[start])) start += 1;
+  for (let index = start; index <= bytes.length; index += 1) {
     if (index < bytes.length && bytes[index] !== LF) continue;
     const piece = bytes.subarray(start, index);
-    for (let length = 1; length <= piece.length; length += 1) {
-      const head = new TextDecoder('utf-8', { fatal: true });
-      try {
-        head.decode(piece.subarray(0, length), { stream: true });
-      } catch {
-        return { line, column: length };
-      }
+    if (!isUtf8(piece)) {
+      let valid = piece.length - 1;
+      while (valid > 0 && !isUtf8(piece.subarray(0, valid))) valid -= 1;
+      return { line, column: valid + 1 };
     }
     start = index + 1;
     line += 1;
   }
   return { line: lineAtStart, column: 1 };
+}
+
+function isContinuation(byte: number | undefined): boolean {
+  return byte !== undefined && byte >= 0x80 && byte < 0xc0;
 }

@@ -13,9 +13,8 @@ export type FromWorker =
   | { kind: 'crash'; message: string };
 
 function startWorker(task: WorkerTask): Worker {
-  return new Worker(new URL('./worker.ts', import.meta.url), {
+  return new Worker(new URL('./worker-entry.mjs', import.meta.url), {
     workerData: task,
-    execArgv: ['--import', import.meta.resolve('tsx')],
   });
 }
 
