@@ -44,6 +44,8 @@ export const usedCountsSchema = z.object({
   excluded: z.number().int(),
   /** No place on the time axis: a partial date, or no planned day. */
   noTime: z.number().int(),
+  /** No group known, where the specification asks for groups. */
+  noGroup: z.number().int(),
 });
 
 /** Part 4: stands on the page only, under the stamp; never in an export while the fit is locked. */

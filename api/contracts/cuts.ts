@@ -96,6 +96,7 @@ export const cutDetailSchema = cutSummarySchema.extend({
     z.object({
       subjectCode: z.string(),
       visit: z.string(),
+      measure: z.string(),
       visitDate: z.string(),
       enteredAt: z.string(),
       days: z.number().int(),
