@@ -1,0 +1,81 @@
+/** A refusal by the API, said in the words of our own catalogue. */
+import { z } from 'zod';
+import type { ProblemParams } from '../words/problems.ts';
+import { problems, words } from '../words/en.ts';
+
+const documentSchema = z.object({
+  title: z.string().optional(),
+  status: z.number().optional(),
+  detail: z.string().optional(),
+  code: z.string().optional(),
+  params: z.record(z.string(), z.union([z.string(), z.number()])).optional(),
+  errors: z.array(z.object({ path: z.string(), message: z.string() })).optional(),
+});
+
+type Facts = {
+  status: number;
+  code: string;
+  params?: ProblemParams;
+  errors?: readonly { path: string; message: string }[];
+  requestId?: string | null;
+};
+
+export class ApiProblem extends Error {
+  readonly status: number;
+  readonly code: string;
+  readonly params: ProblemParams;
+  readonly errors: readonly { path: string; message: string }[];
+  /** The number that support can find this request by. */
+  readonly requestId: string | null;
+
+  constructor(facts: Facts, options?: ErrorOptions) {
+    super(sentenceFor(facts.code, facts.params ?? {}, facts.status), options);
+    this.name = 'ApiProblem';
+    this.status = facts.status;
+    this.code = facts.code;
+    this.params = facts.params ?? {};
+    this.errors = facts.errors ?? [];
+    this.requestId = facts.requestId ?? null;
+  }
+}
+
+function sentenceFor(code: string, params: ProblemParams, status: number): string {
+  const sentence = problems[code];
+  if (sentence) return sentence(params);
+  if (status === 401) return words.states.signedOut;
+  if (status === 403) return words.states.forbidden;
+  if (status === 404) return words.states.notFound;
+  return words.states.failed;
+}
+
+/** Reads the problem document of a refused response. */
+export async function problemFrom(response: Response): Promise<ApiProblem> {
+  const requestId = response.headers.get('x-request-id');
+  const text = await response.text();
+  let facts: z.infer<typeof documentSchema> = {};
+  if ((response.headers.get('content-type') ?? '').includes('json')) {
+    const read = documentSchema.safeParse(parseJson(text));
+    if (read.success) facts = read.data;
+  }
+  return new ApiProblem({
+    status: response.status,
+    code: facts.code ?? `status_${response.status}`,
+    params: facts.params,
+    errors: facts.errors,
+    requestId,
+  });
+}
+
+function parseJson(text: string): unknown {
+  try {
+    return JSON.parse(text);
+  } catch (error) {
+    // A proxy may answer with a page of its own; the status still says what happened.
+    return { detail: String(error) };
+  }
+}
+
+/** The sentence of anything that was thrown. */
+export function sentenceOf(error: unknown): string {
+  return error instanceof ApiProblem ? error.message : words.states.failed;
+}
