@@ -1,6 +1,6 @@
 import { createHash } from 'node:crypto';
 import { describe, expect, it } from 'vitest';
-import { canonicalJson } from '../../api/features/analysis/canonical-json.ts';
+import { canonicalJson } from '../../api/analysis-threads/canonical-json.ts';
 import { specificationSha256 } from '../../api/features/analysis/specification.ts';
 
 describe('canonical JSON', () => {

@@ -9,7 +9,7 @@ import {
   type SubjectOfCut,
 } from '../../api/features/cuts/cut-rows.ts';
 import { addDays, daysBetween, isCalendarDay } from '../../api/features/cuts/days.ts';
-import { differenceOfCuts } from '../../api/features/cuts/difference.ts';
+import { differenceOfCuts } from '../../api/analysis-threads/difference.ts';
 import { numberText } from '../../api/features/cuts/number-text.ts';
 
 describe('number text', () => {
