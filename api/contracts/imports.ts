@@ -31,7 +31,8 @@ const whenSchema = z.discriminatedUnion('kind', [
 export const importMappingSchema = z.object({
   subject: z.string().min(1),
   value: z.string().min(1),
-  when: whenSchema,
+  /** null for a measure taken once per subject. */
+  when: whenSchema.nullable(),
   replicate: z.string().min(1).nullable(),
   site: z.string().min(1).nullable(),
   decimal: z.enum(['.', ',']),
