@@ -78,7 +78,11 @@ export async function api<Answer = void>(path: string, call: Call<Answer> = {}):
   const read = call.answer.safeParse(await response.json());
   if (read.success) return read.data;
   throw new ApiProblem(
-    { status: response.status, code: 'unexpected_answer', requestId: response.headers.get('x-request-id') },
+    {
+      status: response.status,
+      code: 'unexpected_answer',
+      requestId: response.headers.get('x-request-id'),
+    },
     { cause: read.error },
   );
 }

@@ -1,7 +1,7 @@
 /** A refusal by the API, said in the words of our own catalogue. */
 import { z } from 'zod';
-import type { ProblemParams } from '../words/problems.ts';
 import { problems, words } from '../words/en.ts';
+import type { ProblemParams } from '../words/problems.ts';
 
 const documentSchema = z.object({
   title: z.string().optional(),

@@ -27,7 +27,5 @@ export function ButtonLink({
   className = '',
   ...rest
 }: LinkProps & { weight?: Weight }) {
-  return (
-    <Link {...rest} className={`${CLASSES[weight]} inline-block no-underline ${className}`} />
-  );
+  return <Link {...rest} className={`${CLASSES[weight]} inline-block no-underline ${className}`} />;
 }

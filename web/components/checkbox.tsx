@@ -1,5 +1,8 @@
 import type { ReactNode } from 'react';
-import { Checkbox as AriaCheckbox, CheckboxGroup as AriaCheckboxGroup } from 'react-aria-components';
+import {
+  Checkbox as AriaCheckbox,
+  CheckboxGroup as AriaCheckboxGroup,
+} from 'react-aria-components';
 import { FieldLabel, FieldMessage, type FieldWords } from './field.tsx';
 import type { Choice } from './select.tsx';
 
@@ -75,9 +78,7 @@ export function CheckboxGroup(props: CheckboxGroupProps) {
             <Box />
             <span>
               {choice.label}
-              {choice.note ? (
-                <span className="ml-2 text-13 text-faded">{choice.note}</span>
-              ) : null}
+              {choice.note ? <span className="ml-2 text-13 text-faded">{choice.note}</span> : null}
             </span>
           </AriaCheckbox>
         ))}

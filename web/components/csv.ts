@@ -10,7 +10,10 @@ function field(cell: CsvCell): string {
 
 /** Rows of cells as CSV text with CRLF ends. */
 export function toCsv(rows: readonly (readonly CsvCell[])[]): string {
-  return rows.map((row) => row.map(field).join(',')).join('\r\n').concat('\r\n');
+  return rows
+    .map((row) => row.map(field).join(','))
+    .join('\r\n')
+    .concat('\r\n');
 }
 
 /** Hands a file made in the page to the person. */

@@ -16,6 +16,10 @@ export function NumberField({ whole, width = 9, ...rest }: NumberFieldProps) {
 
 /** The number in a text: a point or one comma for decimals, U+2212 taken as minus; null where there is none. */
 export function readNumber(text: string): number | null {
-  const plain = text.trim().replace('\u2212', '-').replace(/[\u2009\u00a0 ]/g, '').replace(',', '.');
+  const plain = text
+    .trim()
+    .replace('\u2212', '-')
+    .replace(/[\u2009\u00a0 ]/g, '')
+    .replace(',', '.');
   return /^[+-]?(\d+\.?\d*|\.\d+)(e[+-]?\d+)?$/i.test(plain) ? Number(plain) : null;
 }

@@ -1,4 +1,4 @@
-import { Radio, RadioGroup as AriaRadioGroup, Text } from 'react-aria-components';
+import { RadioGroup as AriaRadioGroup, Radio, Text } from 'react-aria-components';
 import { FieldLabel, FieldMessage, type FieldWords } from './field.tsx';
 import type { Choice } from './select.tsx';
 

@@ -1,5 +1,5 @@
 import type { HTMLInputAutoCompleteAttribute, ReactNode, Ref } from 'react';
-import { Input, TextArea, TextField as AriaTextField } from 'react-aria-components';
+import { TextField as AriaTextField, Input, TextArea } from 'react-aria-components';
 import { FieldLabel, FieldMessage, FieldRow, type FieldWords } from './field.tsx';
 
 type TextFieldProps = FieldWords & {
@@ -100,9 +100,7 @@ export function TextAreaField(props: TextAreaFieldProps) {
         rows={props.rows ?? 3}
         className="control mt-1 block w-full max-w-text"
       />
-      {props.reading ? (
-        <span className="block text-13 text-faded">{props.reading}</span>
-      ) : null}
+      {props.reading ? <span className="block text-13 text-faded">{props.reading}</span> : null}
       <FieldMessage error={props.error} />
     </AriaTextField>
   );

@@ -81,7 +81,9 @@ export const stateWords = {
 
 export const formWords = {
   summary: (count: number) =>
-    count === 1 ? 'One entry needs your attention' : `${formatCount(count)} entries need your attention`,
+    count === 1
+      ? 'One entry needs your attention'
+      : `${formatCount(count)} entries need your attention`,
   required: 'Fill this in.',
   tooShort: (least: number) => `Write at least ${counted(least, 'character', 'characters')}.`,
   tooLong: (most: number) => `Write at most ${counted(most, 'character', 'characters')}.`,
@@ -141,5 +143,6 @@ export const hashWords = { copy: 'Copy', copied: 'Copied.' } as const;
 /** Problem codes that any page may meet. */
 export const commonProblems: ProblemSentences = {
   unreachable: () => 'The server can’t be reached. Nothing was sent twice; try again.',
-  unexpected_answer: () => 'The server’s answer is not what this page expects. Load the page again.',
+  unexpected_answer: () =>
+    'The server’s answer is not what this page expects. Load the page again.',
 };
