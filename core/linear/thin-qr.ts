@@ -1,0 +1,72 @@
+import { StatsError } from '../errors.ts';
+
+/** Below this share of its length a column counts as determined by the earlier ones. */
+const COLLINEAR = 1e-10;
+
+/** A thin QR factorisation: N × p columns with Q'Q = I, and R (p × p, row-major, upper triangular). */
+export interface ThinQr {
+  readonly q: readonly Float64Array[];
+  readonly r: Float64Array;
+}
+
+function dot(a: Float64Array, b: Float64Array): number {
+  let sum = 0;
+  for (let k = 0; k < a.length; k++) sum += a[k]! * b[k]!;
+  return sum;
+}
+
+/** Takes the part of `v` along `unit` away and returns its coefficient. */
+function takeAway(v: Float64Array, unit: Float64Array): number {
+  const along = dot(unit, v);
+  for (let k = 0; k < v.length; k++) v[k]! -= along * unit[k]!;
+  return along;
+}
+
+/**
+ * Thin QR by Gram–Schmidt done twice, which leaves Q orthogonal to working precision ("twice is enough",
+ * Giraud, Langou & Rozložník 2005) and runs over typed columns only.
+ *
+ * @param columns p columns of N numbers, best centred and scaled
+ * @param names p names for refusals
+ * @throws StatsError collinear, naming the first column that the earlier ones determine
+ */
+export function thinQr(columns: readonly Float64Array[], names: readonly string[]): ThinQr {
+  const p = columns.length;
+  const q: Float64Array[] = [];
+  const r = new Float64Array(p * p);
+  columns.forEach((column, j) => {
+    const v = Float64Array.from(column);
+    const length = Math.sqrt(dot(v, v));
+    for (let pass = 0; pass < 2; pass++) {
+      q.forEach((unit, i) => {
+        r[i * p + j]! += takeAway(v, unit);
+      });
+    }
+    const left = Math.sqrt(dot(v, v));
+    if (!(left > COLLINEAR * length)) throw new StatsError('collinear', { column: names[j]! });
+    r[j * p + j] = left;
+    for (let k = 0; k < v.length; k++) v[k]! /= left;
+    q.push(v);
+  });
+  return { q, r };
+}
+
+/** What projecting a response on the columns of Q leaves. */
+export interface Projection {
+  /** p coefficients Q'y. */
+  readonly along: Float64Array;
+  /** N residuals y − QQ'y. */
+  readonly residuals: Float64Array;
+}
+
+/** Projects `response` (N) on Q, twice, so that the residuals are orthogonal to Q to working precision. */
+export function project(q: readonly Float64Array[], response: Float64Array): Projection {
+  const residuals = Float64Array.from(response);
+  const along = new Float64Array(q.length);
+  for (let pass = 0; pass < 2; pass++) {
+    q.forEach((unit, i) => {
+      along[i]! += takeAway(residuals, unit);
+    });
+  }
+  return { along, residuals };
+}
