@@ -41,8 +41,7 @@ export function ordinaryBand(
     for (const time of times) {
       const away = time - moments.time;
       const estimate = moments.response + slope * away;
-      const half =
-        quantile * sigma * Math.sqrt(1 / moments.n + (away * away) / moments.spread);
+      const half = quantile * sigma * Math.sqrt(1 / moments.n + (away * away) / moments.spread);
       const known = Number.isFinite(half);
       points.push({
         group,

@@ -1,0 +1,93 @@
+/** What the spaghetti plot draws, from the used readings of a cut. */
+import type { SpecificationInput } from '../contracts/analysis.ts';
+import { type CutTable, toUnit } from './cut-table.ts';
+import type { PictureAnswer } from './jobs.ts';
+import type { LinePoint } from './ordinary-band.ts';
+
+/** Enough for a smooth edge of a band that bends. */
+const BAND_POINTS = 49;
+
+export interface UsedReading {
+  subject: string;
+  time: number;
+  response: number;
+  group: string | null;
+  visit: string;
+  plannedDay: number;
+}
+
+/** The rows that the engine uses, in the order of the cut. */
+export function usedReadings({ table, visit, plannedDay }: CutTable): UsedReading[] {
+  const used: UsedReading[] = [];
+  table.subject.forEach((subject, row) => {
+    const time = table.time[row] ?? Number.NaN;
+    const response = table.response[row] ?? Number.NaN;
+    const group = table.group === undefined ? null : (table.group[row] ?? '');
+    if (!Number.isNaN(time) && !Number.isNaN(response) && group !== '') {
+      used.push({
+        subject,
+        time,
+        response,
+        group,
+        visit: visit[row] ?? '',
+        plannedDay: plannedDay[row] ?? Number.NaN,
+      });
+    }
+  });
+  return used;
+}
+
+/** Evenly spaced times over the readings, both ends included. */
+export function bandTimes(readings: readonly UsedReading[]): number[] {
+  let first = Number.POSITIVE_INFINITY;
+  let last = Number.NEGATIVE_INFINITY;
+  for (const { time } of readings) {
+    first = Math.min(first, time);
+    last = Math.max(last, time);
+  }
+  const step = (last - first) / (BAND_POINTS - 1);
+  return Array.from({ length: BAND_POINTS }, (_, at) =>
+    at === BAND_POINTS - 1 ? last : first + at * step,
+  );
+}
+
+export function pictureOf(
+  readings: readonly UsedReading[],
+  unit: SpecificationInput['unit'],
+  line: readonly LinePoint[],
+): PictureAnswer {
+  const subjects = new Map<string, PictureAnswer['subjects'][number]>();
+  const visits = new Map<string, PictureAnswer['visits'][number]>();
+  const lastTimes = new Map<string | null, Map<string, number>>();
+  for (const { subject, time, response, group, visit, plannedDay } of readings) {
+    const own = subjects.get(subject) ?? { code: subject, group, readings: [] };
+    own.readings.push({ time, value: response, visit });
+    subjects.set(subject, own);
+    if (!Number.isNaN(plannedDay)) {
+      const at = visits.get(visit) ?? { name: visit, time: toUnit(plannedDay, unit), n: 0 };
+      at.n += 1;
+      visits.set(visit, at);
+    }
+    const last = lastTimes.get(group) ?? new Map<string, number>();
+    last.set(subject, Math.max(last.get(subject) ?? Number.NEGATIVE_INFINITY, time));
+    lastTimes.set(group, last);
+  }
+  for (const own of subjects.values()) {
+    own.readings.sort((a, b) => a.time - b.time);
+  }
+  const bands = new Map<string | null, PictureAnswer['band'][number]>();
+  for (const { group, ...point } of line) {
+    const band = bands.get(group) ?? { group, points: [] };
+    let remaining = 0;
+    for (const last of lastTimes.get(group)?.values() ?? []) {
+      remaining += last >= point.time ? 1 : 0;
+    }
+    band.points.push({ ...point, remaining });
+    bands.set(group, band);
+  }
+  return {
+    subjects: [...subjects.values()],
+    visits: [...visits.values()].sort((a, b) => a.time - b.time),
+    band: [...bands.values()],
+  };
+}

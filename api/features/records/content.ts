@@ -1,0 +1,46 @@
+/** What a record vouches for, in one spelling; its hash is what a signature is bound to. */
+import { canonicalJson, type JsonValue } from '../../analysis-threads/canonical-json.ts';
+import type { fits, purposes, SpecificationInput } from '../../contracts/analysis.ts';
+import { sha256Of } from '../analysis/specification.ts';
+
+export interface RecordContent {
+  cut: { uid: string; number: number; name: string; visitCutoff: string; sha256: string };
+  specification: SpecificationInput & { sha256: string; number: number };
+  fit: (typeof fits)[number];
+  purpose: (typeof purposes)[number];
+  acknowledgement: { by: string; at: string; reason: string } | null;
+  /** Canonical JSON texts, as stored. */
+  checkText: string;
+  resultText: string;
+  engine: string;
+  seed: number;
+  createdBy: string;
+  createdAt: string;
+}
+
+/** The content as the file shows it; `content_sha256` is the hash of its canonical JSON. */
+export function contentOf(record: RecordContent): JsonValue {
+  return {
+    acknowledgement: record.acknowledgement,
+    check: JSON.parse(record.checkText),
+    created_at: record.createdAt,
+    created_by: record.createdBy,
+    cut: {
+      id: record.cut.uid,
+      name: record.cut.name,
+      number: record.cut.number,
+      sha256: record.cut.sha256,
+      visit_cutoff: record.cut.visitCutoff,
+    },
+    engine: record.engine,
+    fit: record.fit,
+    purpose: record.purpose,
+    result: JSON.parse(record.resultText),
+    seed: record.seed,
+    specification: { ...record.specification },
+  };
+}
+
+export function contentSha256(record: RecordContent): string {
+  return sha256Of(canonicalJson(contentOf(record)));
+}
