@@ -1,7 +1,16 @@
 import { describe, expect, test } from 'vitest';
 import { StatsError } from '../../core/errors.ts';
-import { analyseRows, type Options, present, type Result, type Row } from './support/engine.ts';
+import { differences } from './support/differences.ts';
+import {
+  analyseReference,
+  analyseRows,
+  type Options,
+  present,
+  type Result,
+  type Row,
+} from './support/engine.ts';
 import { holes } from './support/no-holes.ts';
+import { referenceAnalysis } from './support/reference.ts';
 
 // Tables at the edge: refused with a typed error, or answered with nulls that say why.
 
@@ -299,14 +308,21 @@ describe('extreme leverage', () => {
     expect(reasonOf(time, 'p')).toContain('far');
   });
 
-  test('nearly so: df as clubSandwich gives them', () => {
-    // One other subject stands a hair from time 0: eigenvalues of H_ii are 1 - 3e-7 and close to 1.
-    const near: Row[] = rows.map(([s, t, y], k): Row => [s, k === 0 ? 0.01 : t, y]);
-    const time = present(answer(near).pooled?.coefficients.time, 'time');
-    // R: coef_test(lm(y ~ t), vcov = "CR2", cluster = s, test = "Satterthwaite").
-    expect(time.df).not.toBeNull();
-    expect(time.se_cr2).not.toBeNull();
-    expect(time.df!).toBeGreaterThan(0.99);
+  // H_ii of that subject has an eigenvalue of 1 - 2e-3 … 1 - 2e-9: tests/reference/leverage. Towards the
+  // end R's own (I - H)^(-1/2) of an N x N matrix keeps fewer digits than the short form.
+  test.each([
+    ['step 1', 1e-8],
+    ['step 0.1', 1e-7],
+    ['step 0.01', 1e-5],
+    ['step 0.001', 1e-3],
+  ])('nearly so, %s: errors and df as clubSandwich gives them', (name, tolerance) => {
+    const reference = referenceAnalysis('leverage', name);
+    const result = analyseReference('leverage', reference, { only: ['cr'] });
+    const time = present(result.pooled?.coefficients.time, 'time');
+    const { estimate, se_cr0, se_cr1, se_cr2, se_cr3, df } = reference.pooled.coefficients.time!;
+    expect(differences(time, { estimate, se_cr0, se_cr1, se_cr2, se_cr3, df }, tolerance)).toEqual(
+      [],
+    );
   });
 });
 

@@ -10,7 +10,7 @@ export function holes(value: unknown, path = 'result'): string[] {
   if (value === undefined) return [`${path} is undefined`];
   if (typeof value === 'function' || typeof value === 'symbol') return [`${path} is no data`];
   if (typeof value === 'string')
-    return /\b(NaN|Infinity|undefined|null)\b/.test(value) ? [`${path}: ${value}`] : [];
+    return /\b(NaN|Infinity|undefined)\b/.test(value) ? [`${path}: ${value}`] : [];
   if (value === null || typeof value === 'boolean') return [];
   if (Array.isArray(value)) return value.flatMap((item, i) => holes(item, `${path}[${i}]`));
   if (ArrayBuffer.isView(value))
