@@ -96,7 +96,7 @@ export function Cord({ visits, today, endedAt = null, endWord = null, scale }: P
 /** A place on the cord: everything inside is drawn around (0, 0) on the line. */
 function At({ place, children }: { place: number; children: React.ReactNode }) {
   return (
-    <svg x={`${round(place)}%`} y={CORD.line} overflow="visible">
+    <svg aria-hidden="true" x={`${round(place)}%`} y={CORD.line} overflow="visible">
       {children}
     </svg>
   );
