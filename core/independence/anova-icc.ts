@@ -15,13 +15,24 @@ export interface SubjectAnova {
   readonly dfWithin: number;
 }
 
+function squaresOf(values: Float64Array): number {
+  let sum = 0;
+  for (let r = 0; r < values.length; r++) sum += values[r]! * values[r]!;
+  return sum;
+}
+
 /**
  * The analysis of variance of `values` (N) by subject; `start` holds the G + 1 offsets.
  *
  * Values are taken as differences from the first and means are computed before squares, so that values far from
- * zero keep their digits. Null where no subject repeats.
+ * zero keep their digits. `sumOfSquares`, by default of the values themselves, sets what counts as rounding; for
+ * residuals give that of the response. Null where no subject repeats.
  */
-export function subjectAnova(values: Float64Array, start: Int32Array): SubjectAnova | null {
+export function subjectAnova(
+  values: Float64Array,
+  start: Int32Array,
+  sumOfSquares: number = squaresOf(values),
+): SubjectAnova | null {
   const n = values.length;
   const g = start.length - 1;
   if (n === g) return null;
@@ -30,7 +41,6 @@ export function subjectAnova(values: Float64Array, start: Int32Array): SubjectAn
   for (let r = 0; r < n; r++) total += (values[r]! - origin) / n;
   let between = 0;
   let within = 0;
-  let size = 0;
   let squaredCounts = 0;
   for (let i = 0; i < g; i++) {
     const from = start[i]!;
@@ -41,12 +51,11 @@ export function subjectAnova(values: Float64Array, start: Int32Array): SubjectAn
     for (let r = from; r < to; r++) {
       const d = values[r]! - origin - mean;
       within += d * d;
-      size += values[r]! * values[r]!;
     }
     between += count * (mean - total) ** 2;
     squaredCounts += count * count;
   }
-  const floor = (ROUNDING * size) / n;
+  const floor = (ROUNDING * sumOfSquares) / n;
   const msb = between / (g - 1);
   const msw = within / (n - g);
   return {

@@ -22,9 +22,22 @@ const BINS = 12;
 /** Lags that differ by rounding only are one lag: shares of the longest lag are compared at this width. */
 const SAME_LAG = 1e-9;
 
+/** More pairs than this are not held in memory at once. */
+export const MOST_PAIRS = 1e7;
+
 interface Pairs {
   readonly lag: Float64Array;
   readonly value: Float64Array;
+}
+
+/** Pairs of readings of one subject, Σ n_i(n_i − 1)/2. */
+export function pairsWithin(start: Int32Array): number {
+  let count = 0;
+  for (let i = 0; i < start.length - 1; i++) {
+    const n = start[i + 1]! - start[i]!;
+    count += (n * (n - 1)) / 2;
+  }
+  return count;
 }
 
 function pairsWithinSubjects(
@@ -32,11 +45,7 @@ function pairsWithinSubjects(
   time: Float64Array,
   start: Int32Array,
 ): Pairs {
-  let count = 0;
-  for (let i = 0; i < start.length - 1; i++) {
-    const n = start[i + 1]! - start[i]!;
-    count += (n * (n - 1)) / 2;
-  }
+  const count = pairsWithin(start);
   const lag = new Float64Array(count);
   const value = new Float64Array(count);
   let next = 0;
@@ -111,15 +120,17 @@ export function totalVarianceLine(residuals: Float64Array, start: Int32Array): n
 
 /**
  * The sample semivariogram of residuals (N) by time apart within subjects: at each distinct lag when there are at
- * most 15, else in 12 bins by type-7 quantiles of the pair lags. Null where no subject repeats.
+ * most 15, else in 12 bins by type-7 quantiles of the pair lags. Null where no subject repeats, or where there are
+ * more than `MOST_PAIRS` pairs.
  */
 export function sampleVariogram(
   residuals: Float64Array,
   time: Float64Array,
   start: Int32Array,
 ): Variogram | null {
+  const count = pairsWithin(start);
+  if (count === 0 || count > MOST_PAIRS) return null;
   const { lag, value } = pairsWithinSubjects(residuals, time, start);
-  if (lag.length === 0) return null;
   const edges = upperEdges(lag);
   const lags = new Float64Array(edges.length);
   const values = new Float64Array(edges.length);
