@@ -10,7 +10,11 @@ export type Applying = {
 
 export type Applied = { readings: number; subjects: number; visits: number; hash: string };
 
-export async function applyRows(query: Query, judging: Judging, applying: Applying): Promise<Applied> {
+export async function applyRows(
+  query: Query,
+  judging: Judging,
+  applying: Applying,
+): Promise<Applied> {
   if (!applying.keepImplausible) {
     await query(
       `UPDATE staged_row
@@ -29,7 +33,10 @@ export async function applyRows(query: Query, judging: Judging, applying: Applyi
 }
 
 async function countOf(query: Query, sql: string, params: unknown[]): Promise<number> {
-  const [row] = (await query(`WITH written AS (${sql} RETURNING 1) SELECT count(*)::int AS n FROM written`, params)) as {
+  const [row] = (await query(
+    `WITH written AS (${sql} RETURNING 1) SELECT count(*)::int AS n FROM written`,
+    params,
+  )) as {
     n: number;
   }[];
   return row?.n ?? 0;
