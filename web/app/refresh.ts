@@ -31,3 +31,16 @@ export function refreshOnce(sentAt: number): Promise<boolean> {
   });
   return running;
 }
+
+/** Kept when somebody signs in: the token is fresh. */
+export function markRenewed(): void {
+  localStorage.setItem(RENEWED_AT, String(Date.now()));
+}
+
+const DUE_MS = 4 * 60_000;
+
+/** Renews before the token runs out, so that no request has to be refused first. */
+export async function renewIfDue(): Promise<void> {
+  const dueSince = Date.now() - DUE_MS;
+  if (Number(localStorage.getItem(RENEWED_AT) ?? 0) < dueSince) await refreshOnce(dueSince);
+}

@@ -5,7 +5,6 @@ import type { ProblemSentences } from './problems.ts';
 export const commonWords = {
   product: 'Tetherline',
   titleOf: (heading: string) => `${heading} · Tetherline`,
-  skip: 'Skip to the content',
   optional: 'optional',
   none: '\u2014',
   previous: (value: string) => `was ${value}`,
@@ -24,6 +23,8 @@ export const topBarWords = {
   places: 'Places',
   chooseStudy: 'Change study',
   account: 'Account',
+  accountOf: (name: string) => `Account of ${name}`,
+  skip: 'Skip to the content',
   signOut: 'Sign out',
   help: 'Help',
   findSubject: 'Subject code',

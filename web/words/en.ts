@@ -2,6 +2,8 @@
  * The catalogue: every visible string of the pages, typed. Each noun keeps its own file;
  * they are put together here and nowhere else.
  */
+import { accountProblems, accountWords } from './account.ts';
+import { accountsProblems, accountsWords } from './accounts.ts';
 import {
   chairWord,
   commonProblems,
@@ -16,7 +18,12 @@ import {
   tableWords,
   topBarWords,
 } from './common.ts';
+import { homeWords } from './home.ts';
+import { membersProblems, membersWords } from './members.ts';
 import type { ProblemSentences } from './problems.ts';
+import { securityProblems, securityWords } from './security.ts';
+import { setupProblems, setupWords } from './setup.ts';
+import { signInProblems, signInWords } from './sign-in.ts';
 
 export const words = {
   common: commonWords,
@@ -30,9 +37,22 @@ export const words = {
   signing: signingWords,
   progress: progressWords,
   hash: hashWords,
+  signIn: signInWords,
+  home: homeWords,
+  account: accountWords,
+  members: membersWords,
+  setup: setupWords,
+  accounts: accountsWords,
+  security: securityWords,
 } as const;
 
 /** Sentences by the code of a problem document. */
 export const problems: ProblemSentences = {
   ...commonProblems,
+  ...signInProblems,
+  ...accountProblems,
+  ...membersProblems,
+  ...setupProblems,
+  ...accountsProblems,
+  ...securityProblems,
 };

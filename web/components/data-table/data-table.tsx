@@ -7,6 +7,7 @@ import {
 } from '@tanstack/react-table';
 import { useVirtualizer } from '@tanstack/react-virtual';
 import { type ReactNode, useMemo, useRef, useState } from 'react';
+import { sentenceOf } from '../../app/problem.ts';
 import { words } from '../../words/en.ts';
 import { saveFile, toCsv } from '../csv.ts';
 import { notify } from '../notices.tsx';
@@ -42,8 +43,16 @@ export type DataTableProps<Row extends AnyRow> = {
   initialSort?: Sort;
   /** Tells apart two tables of one page in the address. */
   prefix?: string;
-  /** Where the server sorts, filters and pages. `exportCsv` then saves the whole view. */
-  server?: { total: number; pageSize: number; exportCsv?: () => void };
+  /**
+   * Where the server sorts, filters and pages. The file of the view then comes from `allRows`,
+   * or from `exportCsv` where the server makes it.
+   */
+  server?: {
+    total: number;
+    pageSize: number;
+    allRows?: () => Promise<readonly Row[]>;
+    exportCsv?: () => void;
+  };
   /** Picking a row, for a subject that is picked everywhere on the page. */
   picked?: string | null;
   onPick?: (id: string) => void;
@@ -117,14 +126,15 @@ export function DataTable<Row extends AnyRow>(props: DataTableProps<Row>) {
   const drawn = windowed ? windowed.flatMap(({ index }) => sorted[index] ?? []) : sorted;
   const first = windowed?.[0]?.index ?? 0;
 
-  function exportView() {
+  async function exportView() {
     if (server?.exportCsv) return server.exportCsv();
     const exported = visible.filter((column) => !column.notExported);
+    const all = server?.allRows ? await server.allRows() : sorted.map(({ original }) => original);
     saveFile(
       `${props.name}.csv`,
       toCsv([
         exported.map(headingOf),
-        ...sorted.map((row) => exported.map((column) => column.value(row.original))),
+        ...all.map((row) => exported.map((column) => column.value(row))),
       ]),
     );
   }
@@ -157,7 +167,9 @@ export function DataTable<Row extends AnyRow>(props: DataTableProps<Row>) {
             localStorage.setItem(DENSE, next ? 'yes' : 'no');
             setDense(next);
           }}
-          exportCsv={server && !server.exportCsv ? undefined : exportView}
+          exportCsv={() => {
+            exportView().catch((error) => notify(sentenceOf(error), { urgent: true }));
+          }}
         />
       </div>
       <div
@@ -224,7 +236,7 @@ export function DataTable<Row extends AnyRow>(props: DataTableProps<Row>) {
 /** Holds the place of rows that are not drawn. */
 function Spacer({ height, columns }: { height: number; columns: number }) {
   return (
-    <tr role="presentation">
+    <tr>
       <td colSpan={columns} style={{ height, padding: 0, border: 0 }} />
     </tr>
   );

@@ -10,7 +10,7 @@ type TableToolsProps<Row> = {
   setShown: (columns: string[] | null) => void;
   dense: boolean;
   setDense: (dense: boolean) => void;
-  exportCsv?: () => void;
+  exportCsv: () => void;
 };
 
 /** Column choice, row height and the same view as a file. */
@@ -49,11 +49,9 @@ export function TableTools<Row>(props: TableToolsProps<Row>) {
           </Dialog>
         </Popover>
       </DialogTrigger>
-      {props.exportCsv ? (
-        <Button weight="quiet" onPress={props.exportCsv}>
-          {words.table.exportCsv}
-        </Button>
-      ) : null}
+      <Button weight="quiet" onPress={props.exportCsv}>
+        {words.table.exportCsv}
+      </Button>
     </div>
   );
 }

@@ -1,0 +1,3 @@
+export function FindSubject({ study }: { study: string }) {
+  return <span>{study}</span>;
+}

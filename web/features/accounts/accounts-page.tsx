@@ -1,0 +1,3 @@
+export function AccountsPage() {
+  return null;
+}

@@ -1,0 +1,51 @@
+/** Who holds which duties in one study. */
+import type { ProblemSentences } from './problems.ts';
+
+export const membersWords = {
+  heading: 'Members',
+  sentence: 'Who holds which duty in this study. A change takes effect at the member’s next click.',
+  noun: ['member', 'members'],
+  caption: 'Members of this study',
+  name: 'Name',
+  email: 'E-mail',
+  duties: 'Duties',
+  since: 'Since',
+  search: 'Name or e-mail',
+  role: 'Duty',
+  act: 'Act',
+  disabled: 'account disabled',
+  change: 'Change duties',
+  remove: 'Remove',
+  changeOf: (name: string) => `Change duties of ${name}`,
+  removeOf: (name: string) => `Remove ${name}`,
+  addHeading: 'Add a member',
+  addSentence: 'The person needs an account first; the administrator creates it.',
+  emailHint: 'The address of their account.',
+  roles: 'Duties in this study',
+  rolesHint:
+    'Unblinded statistician and board member each exclude every other duty in the same study.',
+  sites: 'Sites',
+  sitesHint: 'A coordinator sees subjects of these sites only.',
+  chair: 'Chairs the board',
+  add: 'Add member',
+  added: (name: string) => `${name} is a member now.`,
+  changeWhat: 'The pages open to this person change with their duties, at their next click.',
+  changeAct: 'Save duties',
+  changed: (name: string) => `The duties of ${name} are changed.`,
+  removeHeading: (name: string) => `Remove ${name} from this study`,
+  removeWhat:
+    'They lose every page of this study at once. What they entered and signed stays, under their name.',
+  removeAct: 'Remove from study',
+  reason: 'Reason',
+  reasonHint: 'Stands in the audit trail.',
+  removed: (name: string) => `${name} is no longer a member.`,
+  excludes: {
+    'unblinded statistician':
+      'The unblinded statistician knows the arms, so holds no other duty here.',
+    'board member': 'A board member decides on released data only, so holds no other duty here.',
+  },
+  coordinatorOf: (sites: string) => `coordinator of ${sites}`,
+  needsSite: 'A coordinator needs at least one site.',
+} as const;
+
+export const membersProblems: ProblemSentences = {};
