@@ -59,3 +59,23 @@ moulton_facts <- function(d, rho) {
 
 # Ratios of errors do not depend on the length of a column; this keeps solve() well conditioned.
 scale_columns <- function(X) sweep(X, 2, sqrt(colSums(X^2)), "/")
+
+# The drawn line with its band: at time t the value of the line is the intercept once time is counted from
+# t, and the level's own line is the reference once that level comes first.
+band_facts <- function(d) {
+  levels_of <- if (is.null(d$group)) list(NULL) else as.list(levels(d$group))
+  times <- unname(c(min(d$time), quantile(d$time, c(0.3, 0.5)), max(d$time) + 1))
+  points <- list()
+  for (level in levels_of) for (t in times) {
+    moved <- transform(d, time = time - t)
+    if (!is.null(level)) moved$group <- relevel(d$group, ref = level)
+    test <- coef_test(ordinary_fit(moved), vcov = "CR2", cluster = moved$subject, test = "Satterthwaite")[1, ]
+    half <- qt(0.975, test$df_Satt) * test$SE
+    point <- list(
+      time = t, estimate = test$beta, lower = test$beta - half, upper = test$beta + half, df = test$df_Satt
+    )
+    if (!is.null(level)) point$group <- level
+    points[[length(points) + 1]] <- point
+  }
+  points
+}
