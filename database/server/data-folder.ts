@@ -1,5 +1,14 @@
 import { createHash, randomUUID } from 'node:crypto';
-import { chmodSync, chownSync, existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs';
+import {
+  accessSync,
+  chmodSync,
+  chownSync,
+  constants,
+  existsSync,
+  mkdirSync,
+  readFileSync,
+  rmSync,
+} from 'node:fs';
 import { homedir, tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { ClusterProblem } from './cluster-problem.ts';
@@ -40,6 +49,27 @@ export async function chooseDataFolder(root: string, env: NodeJS.ProcessEnv): Pr
     }
     if (asked) throw new ClusterProblem('data-folder-unusable', { folder: asked, reason });
     refused.push(`${base} (${reason})`);
+  }
+  throw new ClusterProblem('no-data-folder', { tried: refused.join(', ') });
+}
+
+/**
+ * The folder for secrets and files where PostgreSQL runs elsewhere.
+ * @throws ClusterProblem as `chooseDataFolder`
+ */
+export function chooseBaseFolder(root: string, env: NodeJS.ProcessEnv): string {
+  const asked = env.DATA_DIR ? resolve(root, env.DATA_DIR) : undefined;
+  const refused: string[] = [];
+  for (const base of asked ? [asked] : candidateBases(root)) {
+    try {
+      mkdirSync(base, { recursive: true, mode: 0o700 });
+      accessSync(base, constants.W_OK | constants.X_OK);
+      return base;
+    } catch (error) {
+      const reason = (error as Error).message;
+      if (asked) throw new ClusterProblem('data-folder-unusable', { folder: asked, reason });
+      refused.push(`${base} (${reason})`);
+    }
   }
   throw new ClusterProblem('no-data-folder', { tried: refused.join(', ') });
 }
