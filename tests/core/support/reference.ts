@@ -34,6 +34,14 @@ export interface ReferenceAnalysis {
     not_fitted: string[];
     [name: string]: unknown;
   };
+  band: {
+    time: number;
+    group?: string;
+    estimate: number;
+    lower: number;
+    upper: number;
+    df: number;
+  }[];
   wild_bootstrap?: Record<string, ReferenceWild>;
 }
 
