@@ -88,6 +88,8 @@ export const importSchema = z.object({
   fileName: z.string(),
   fileSize: z.number().int(),
   fileSha256: z.string(),
+  /** Rows below the header. */
+  fileRows: z.number().int(),
   state: z.enum(importStates),
   delimiter: z.string(),
   columns: z.array(importColumnSchema),

@@ -47,6 +47,10 @@ export class Import {
   @Column({ type: 'bigint', transformer: wholeNumber })
   fileSize: string;
 
+  /** Rows below the header, blank lines aside. */
+  @Column({ type: 'integer' })
+  fileRows: number;
+
   @Column({ type: 'text' })
   objectKey: string;
 

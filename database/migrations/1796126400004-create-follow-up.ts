@@ -44,6 +44,7 @@ export class CreateFollowUp1796126400004 implements MigrationInterface {
         file_name text NOT NULL,
         file_hash text NOT NULL,
         file_size bigint NOT NULL,
+        file_rows integer NOT NULL,
         object_key text NOT NULL,
         state text NOT NULL CHECK (state IN ('uploaded', 'checking', 'checked', 'applying', 'applied',
           'nothing new', 'failed', 'cancelled')),
