@@ -3,12 +3,12 @@ import { createBrowserRouter, type RouteObject } from 'react-router-dom';
 import { RouteFailed } from './app/layout/route-failed.tsx';
 import { routes as account } from './features/account/routes.tsx';
 import { routes as accounts } from './features/accounts/routes.tsx';
-import { routes as help } from './features/help/routes.tsx';
 import { routes as home, studyRoutes as studyHome } from './features/home/routes.tsx';
 import { routes as members } from './features/members/routes.tsx';
 import { routes as security } from './features/security/routes.tsx';
 import { routes as setup } from './features/setup/routes.tsx';
 import { routes as signIn } from './features/sign-in/routes.tsx';
+import { routes as help } from './help/routes.tsx';
 
 /** Pages under /studies/:study; paths are relative to it. */
 const inStudy: RouteObject[] = [...studyHome, ...members, ...setup];

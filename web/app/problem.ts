@@ -1,16 +1,11 @@
 /** A refusal by the API, said in the words of our own catalogue. */
-import { z } from 'zod';
+import type { z } from 'zod';
+import { problemSchema } from '../../api/contracts/problem.ts';
 import { problems, words } from '../words/en.ts';
-import type { ProblemParams } from '../words/problems.ts';
+import { fillSentence, type ProblemParams } from '../words/problems.ts';
 
-const documentSchema = z.object({
-  title: z.string().optional(),
-  status: z.number().optional(),
-  detail: z.string().optional(),
-  code: z.string().optional(),
-  params: z.record(z.string(), z.union([z.string(), z.number()])).optional(),
-  errors: z.array(z.object({ path: z.string(), message: z.string() })).optional(),
-});
+/** As far as it can be read: a proxy may answer in the server's place. */
+const documentSchema = problemSchema.partial();
 
 type Facts = {
   status: number;
@@ -41,7 +36,7 @@ export class ApiProblem extends Error {
 
 function sentenceFor(code: string, params: ProblemParams, status: number): string {
   const sentence = problems[code];
-  if (sentence) return sentence(params);
+  if (sentence) return fillSentence(sentence, params);
   if (status === 401) return words.states.signedOut;
   if (status === 403) return words.states.forbidden;
   if (status === 404) return words.states.notFound;
@@ -50,7 +45,6 @@ function sentenceFor(code: string, params: ProblemParams, status: number): strin
 
 /** Reads the problem document of a refused response. */
 export async function problemFrom(response: Response): Promise<ApiProblem> {
-  const requestId = response.headers.get('x-request-id');
   const text = await response.text();
   let facts: z.infer<typeof documentSchema> = {};
   if ((response.headers.get('content-type') ?? '').includes('json')) {
@@ -62,7 +56,7 @@ export async function problemFrom(response: Response): Promise<ApiProblem> {
     code: facts.code ?? `status_${response.status}`,
     params: facts.params,
     errors: facts.errors,
-    requestId,
+    requestId: facts.requestId ?? response.headers.get('x-request-id'),
   });
 }
 

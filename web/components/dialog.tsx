@@ -17,6 +17,8 @@ type DialogProps = {
   onAct: () => Promise<unknown> | unknown;
   /** Closed while the fields do not allow the act. */
   ready?: boolean;
+  /** Where there is nothing to go back from. */
+  noCancel?: boolean;
 };
 
 /** Only for what can't be undone or is signed. It closes when the act is done and stays when it is refused. */
@@ -70,9 +72,11 @@ export function Dialog(props: DialogProps) {
               <Button type="submit" weight="filled" isDisabled={working || props.ready === false}>
                 {props.act}
               </Button>
-              <Button onPress={props.onClose} isDisabled={working}>
-                {words.common.cancel}
-              </Button>
+              {props.noCancel ? null : (
+                <Button onPress={props.onClose} isDisabled={working}>
+                  {words.common.cancel}
+                </Button>
+              )}
             </div>
           </form>
         </AriaDialog>

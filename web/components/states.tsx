@@ -30,7 +30,9 @@ export function Loading({ what = words.states.loading }: { what?: string }) {
 
 /** What failed, whether anything was kept, a way on, and a number for support. */
 export function Failed({ error, again }: { error: unknown; again?: () => void }) {
-  if (error instanceof ApiProblem && error.status === 403) return <Forbidden />;
+  if (error instanceof ApiProblem && error.status === 403) {
+    return <Forbidden sentence={error.message} />;
+  }
   const requestId = error instanceof ApiProblem ? error.requestId : null;
   const missing = error instanceof ApiProblem && error.status === 404;
   return (
@@ -54,15 +56,11 @@ export function Failed({ error, again }: { error: unknown; again?: () => void })
 }
 
 /** Which roles may, and whom to ask. */
-export function Forbidden({ roles }: { roles?: readonly string[] }) {
+function Forbidden({ sentence }: { sentence: string }) {
   return (
     <div className="border-l-4 border-edge py-1 pl-3">
       <h2 className="text-17 font-semibold">{words.states.forbiddenHeading}</h2>
-      <p className="max-w-text">
-        {roles?.length
-          ? words.states.forbiddenWho(words.common.list(roles))
-          : words.states.forbidden}
-      </p>
+      <p className="max-w-text">{sentence}</p>
       <div className="mt-3">
         <ButtonLink to="/">{words.states.notFoundNext}</ButtonLink>
       </div>

@@ -1,4 +1,5 @@
 /** A person's own account. */
+import { counted } from './numbers.ts';
 import type { ProblemSentences } from './problems.ts';
 
 export const accountWords = {
@@ -38,4 +39,11 @@ export const accountWords = {
   act: 'Act',
 } as const;
 
-export const accountProblems: ProblemSentences = {};
+export const accountProblems: ProblemSentences = {
+  password_wrong: 'The present password is not right. Nothing was changed.',
+  password_tries_spent: ({ minutes }) =>
+    `The password was wrong too often. Wait ${counted(Number(minutes), 'minute', 'minutes')}, then try again.`,
+  password_common: 'This password stands on lists that attackers try first. Choose another.',
+  password_same: 'The new password is the old one. Choose another.',
+  password_personal: 'The password holds your name or address. Choose another.',
+};

@@ -50,4 +50,10 @@ export const accountsWords = {
   issuedDone: 'I have written it down',
 } as const;
 
-export const accountsProblems: ProblemSentences = {};
+export const accountsProblems: ProblemSentences = {
+  account_exists: 'An account with this address exists already.',
+  account_own: 'You can’t do this to your own account. Ask another administrator.',
+  account_last_administrator:
+    'This is the last administrator who can sign in. Make another one first.',
+  account_already: 'The account is {state} already.',
+};

@@ -70,7 +70,6 @@ export const stateWords = {
   failedNumber: (id: string) => `Number for support: ${id}`,
   forbiddenHeading: 'This page is not open to your role',
   forbidden: 'Your role in this study may not do this.',
-  forbiddenWho: (roles: string) => `It is open to: ${roles}. The owner of the study gives roles.`,
   notFoundHeading: 'There is nothing at this address',
   notFound: 'It does not exist, or it is not open to you.',
   notFoundNext: 'Go to the start page',
@@ -143,7 +142,25 @@ export const hashWords = { copy: 'Copy', copied: 'Copied.' } as const;
 
 /** Problem codes that any page may meet. */
 export const commonProblems: ProblemSentences = {
-  unreachable: () => 'The server can’t be reached. Nothing was sent twice; try again.',
-  unexpected_answer: () =>
-    'The server’s answer is not what this page expects. Load the page again.',
+  unreachable: 'The server can’t be reached. Nothing was sent twice; try again.',
+  unexpected_answer: 'The server’s answer is not what this page expects. Load the page again.',
+  not_found: 'It does not exist, or it is not open to you.',
+  role_refused: 'This is open to: {roles}. The owner of the study gives roles.',
+  administrator_only: 'This is open to the administrator of the installation.',
+  password_change_needed: 'Your password is a temporary one. Choose your own, then go on.',
+  origin_refused: 'The request came from another site. Open Tetherline itself and try again.',
+  invalid_request: 'Some entries can’t be used as they stand. Nothing was changed.',
+  malformed_json: 'The page sent something the server can’t read. Load the page again.',
+  json_expected: 'The page sent something the server can’t read. Load the page again.',
+  body_too_large: 'This is more than the server takes at once. Send less at a time.',
+  malformed_request: 'The page sent something the server can’t read. Load the page again.',
+  stale_version:
+    'Someone changed this since you read it. Nothing was overwritten; load the page again, then choose.',
+  idempotency_key_form: 'The page sent an unusable key for this act. Load the page again.',
+  idempotency_key_reused: 'This act was changed while it was sent. Load the page again.',
+  idempotency_running: 'The same act is being done at this moment. Wait for it.',
+  already_done: 'This was done already. Load the page again to see the result.',
+  busy: 'Others changed the same data at this moment. Nothing was kept; try again.',
+  failed: 'The server could not do this. Nothing was changed.',
+  job_finished: 'This work has finished, so it can’t be cancelled.',
 };

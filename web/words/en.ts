@@ -18,6 +18,7 @@ import {
   tableWords,
   topBarWords,
 } from './common.ts';
+import { helpWords } from './help.ts';
 import { homeWords } from './home.ts';
 import { membersProblems, membersWords } from './members.ts';
 import type { ProblemSentences } from './problems.ts';
@@ -39,6 +40,7 @@ export const words = {
   hash: hashWords,
   signIn: signInWords,
   home: homeWords,
+  help: helpWords,
   account: accountWords,
   members: membersWords,
   setup: setupWords,

@@ -48,4 +48,19 @@ export const membersWords = {
   needsSite: 'A coordinator needs at least one site.',
 } as const;
 
-export const membersProblems: ProblemSentences = {};
+export const membersProblems: ProblemSentences = {
+  member_no_account:
+    'No account with this address can be added. Ask the administrator to create it.',
+  member_already: 'This person belongs to the study already. Change their duties instead.',
+  member_administrator:
+    'An administrator never sees study data, so this account can’t hold a duty here. Use another account of the person.',
+  duties_exclude: 'A person who is {first} can’t also be {second} in the same study: {why}',
+  member_last_owner:
+    'A study keeps at least one owner who can sign in. Make somebody else owner first.',
+  coordinator_needs_site: 'A coordinator works at one or more sites. Choose them.',
+  sites_without_coordinator:
+    'Sites are chosen for a coordinator only. Take them away, or add that duty.',
+  site_unknown: 'One of the chosen sites does not belong to this study.',
+  chair_needs_board: 'The chair is one of the board members. Add that duty, or take the mark away.',
+  study_closed: 'The study is closed; its members no longer change.',
+};

@@ -1,4 +1,5 @@
 /** The sign-in page, and what stands on it beside the form. */
+import { counted } from './numbers.ts';
 import type { ProblemSentences } from './problems.ts';
 
 export const signInWords = {
@@ -26,4 +27,11 @@ export const signInWords = {
   ],
 } as const;
 
-export const signInProblems: ProblemSentences = {};
+export const signInProblems: ProblemSentences = {
+  not_signed_in: 'Sign in, then try again.',
+  session_ended: 'Your session has ended. Sign in again.',
+  sign_in_refused:
+    'Address and password do not belong together, or the account is not open. Check both; capital letters count.',
+  sign_in_throttled: ({ minutes }) =>
+    `Too many tries. Wait ${counted(Number(minutes), 'minute', 'minutes')}, then try again.`,
+};

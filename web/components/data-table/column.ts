@@ -32,8 +32,9 @@ export type Column<Row> = {
 export type Filter<Row> = {
   id: string;
   label: string;
-  /** Without choices the filter is text typed in. */
+  /** Without choices the filter is text typed in, or a day. */
   choices?: readonly Choice[];
+  day?: boolean;
   /** Not needed where the server filters. */
   matches?: (row: Row, value: string) => boolean;
 };

@@ -49,6 +49,20 @@ function FilterPart<Row>(props: {
       {filter.label}
     </label>
   );
+  if (filter.day) {
+    return (
+      <span className="inline-flex items-baseline gap-2">
+        {label}
+        <input
+          id={id}
+          type="date"
+          className={`${PART} figure`}
+          value={value}
+          onChange={(event) => set(event.target.value)}
+        />
+      </span>
+    );
+  }
   if (!filter.choices) {
     return (
       <span className="inline-flex items-baseline gap-2">

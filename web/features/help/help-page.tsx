@@ -1,3 +1,0 @@
-export function HelpPage() {
-  return null;
-}
