@@ -18,6 +18,10 @@ export interface WildDraws {
   readonly factor: number;
 }
 
+/** Rounding of a squared error and of a squared numerator, relative to the data's scale. */
+const ERROR_ROUNDING = 1e-13;
+const NUMERATOR_ROUNDING = 1e-24;
+
 /** Per subject: s^e, s^x, c^e (p), c^x (p), s^eA (p), s^xA (p), the pieces of statistics on residuals and column. */
 function subjectTable(
   basis: ClusterBasis,
@@ -131,6 +135,12 @@ export function drawWild(basis: ClusterBasis, h: Float64Array, source: WeightSou
       xx += dx * (aadX[j]! - 2 * sums[fx + j]!);
       ex += de * (aadX[j]! - sums[fx + j]!) - dx * sums[fe + j]!;
     }
+    // A draw that leaves the column's own residuals at 0, as the identity does, has no error in δ at all: rounding
+    // there would be multiplied by δ² and would end intervals that have no end.
+    if (xx <= ERROR_ROUNDING * scale[2]) {
+      xx = 0;
+      ex = 0;
+    }
     draws.ne[draw] = sums[0]!;
     draws.nx[draw] = sums[1]!;
     draws.qee[draw] = ee;
@@ -142,10 +152,6 @@ export function drawWild(basis: ClusterBasis, h: Float64Array, source: WeightSou
 
 /** A draw at or above (1 − this) of the observed statistic counts as reaching it. */
 const TIE = 1e-9;
-
-/** Rounding of a squared error and of a squared numerator, relative to the data's scale. */
-const ERROR_ROUNDING = 1e-13;
-const NUMERATOR_ROUNDING = 1e-24;
 
 /**
  * The share of draws with |t*| ≥ |t| when β_k = β̂ − δ is imposed; `se` is the CR1 error of β̂. No draw is added:

@@ -98,7 +98,7 @@ export const STAMP = 'independence not met';
 
 /** Why ordinary results are locked. */
 export function lockedText(readings: number, subjects: number): string {
-  return `Ordinary straight-line results are locked: ${whole(readings)} readings of ${counted(subjects, 'subject', 'subjects')} are not independent. Acknowledge this with a reason to see them.`;
+  return `Ordinary straight-line results are locked: ${whole(readings)} readings of ${counted(subjects, 'subject', 'subjects')} are not independent. To see them, acknowledge this with a reason.`;
 }
 
 /** Why a subject has no line of its own. */
