@@ -1,7 +1,7 @@
 /** What goes into a computing thread and what comes out: plain values only, for they are copied. */
+import type { AnalysisResult, BandPoint } from '../../core/index.ts';
 import type { SpecificationInput } from '../contracts/analysis.ts';
 import type { UsedCounts } from './cut-table.ts';
-import type { LinePoint } from './ordinary-band.ts';
 
 export interface CutJob {
   /** The canonical CSV of the cut. */
@@ -53,7 +53,8 @@ export interface CheckAnswer {
 }
 
 export interface FitJob extends CutJob {
-  /** Why the ordinary fit is wanted; null asks for the pooled one. */
+  fit: 'pooled' | 'ordinary';
+  /** Why the ordinary fit is wanted, where readings repeat. */
   acknowledge: string | null;
 }
 
@@ -64,10 +65,8 @@ export interface FitAnswer {
   checkText: string;
   /** Canonical JSON of the whole result. */
   text: string;
-}
-
-export interface PictureJob extends CutJob {
-  band: { kind: 'pooled' } | { kind: 'ordinary'; sigma: number; df: number };
+  result: AnalysisResult;
+  picture: PictureAnswer;
 }
 
 export interface PictureAnswer {
@@ -77,5 +76,5 @@ export interface PictureAnswer {
     readings: { time: number; value: number; visit: string }[];
   }[];
   visits: { name: string; time: number; n: number }[];
-  band: { group: string | null; points: (Omit<LinePoint, 'group'> & { remaining: number })[] }[];
+  band: { group: string | null; points: (Omit<BandPoint, 'group'> & { remaining: number })[] }[];
 }

@@ -1,8 +1,8 @@
 /** What the spaghetti plot draws, from the used readings of a cut. */
+import type { BandPoint } from '../../core/index.ts';
 import type { SpecificationInput } from '../contracts/analysis.ts';
 import { type CutTable, toUnit } from './cut-table.ts';
 import type { PictureAnswer } from './jobs.ts';
-import type { LinePoint } from './ordinary-band.ts';
 
 /** Enough for a smooth edge of a band that bends. */
 const BAND_POINTS = 49;
@@ -54,7 +54,7 @@ export function bandTimes(readings: readonly UsedReading[]): number[] {
 export function pictureOf(
   readings: readonly UsedReading[],
   unit: SpecificationInput['unit'],
-  line: readonly LinePoint[],
+  line: readonly BandPoint[],
 ): PictureAnswer {
   const subjects = new Map<string, PictureAnswer['subjects'][number]>();
   const visits = new Map<string, PictureAnswer['visits'][number]>();

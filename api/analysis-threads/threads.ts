@@ -3,21 +3,12 @@ import { createRequire } from 'node:module';
 import { pathToFileURL } from 'node:url';
 import { Piscina } from 'piscina';
 import type { CutDifferenceCounts } from './difference.ts';
-import type {
-  Answer,
-  CheckAnswer,
-  CutJob,
-  FitAnswer,
-  FitJob,
-  PictureAnswer,
-  PictureJob,
-} from './jobs.ts';
+import type { Answer, CheckAnswer, CutJob, FitAnswer, FitJob } from './jobs.ts';
 
 export interface AnalysisThreads {
   difference(earlier: Uint8Array, later: Uint8Array): Promise<CutDifferenceCounts>;
   check(job: CutJob): Promise<Answer<CheckAnswer>>;
   fit(job: FitJob): Promise<Answer<FitAnswer>>;
-  picture(job: PictureJob): Promise<Answer<PictureAnswer>>;
   close(): Promise<void>;
 }
 
@@ -44,7 +35,6 @@ export function createAnalysisThreads(
     difference: (earlier, later) => pool.run({ earlier, later }, { name: 'difference' }),
     check: (job) => pool.run(job, { name: 'check' }),
     fit: (job) => pool.run(job, { name: 'fit' }),
-    picture: (job) => pool.run(job, { name: 'picture' }),
     close: () => pool.destroy(),
   };
 }

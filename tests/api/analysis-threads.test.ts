@@ -1,6 +1,5 @@
 import { describe, expect, it } from 'vitest';
 import { tableOfCut } from '../../api/analysis-threads/cut-table.ts';
-import { ordinaryBand } from '../../api/analysis-threads/ordinary-band.ts';
 import { bandTimes, pictureOf, usedReadings } from '../../api/analysis-threads/picture.ts';
 
 const csv = [
@@ -39,19 +38,6 @@ describe('table of a cut', () => {
     const { table, counts } = tableOfCut(bytes, { ...days, axis: 'planned_day', unit: 'weeks' });
     expect([...table.time.slice(0, 2)]).toEqual([0, 1]);
     expect(counts.noTime).toBe(2);
-  });
-});
-
-describe('ordinary band', () => {
-  it('repeats the textbook limits of R: predict(lm(y ~ x), interval = "confidence")', () => {
-    // x <- c(0, 8, 10, 0); y <- c(1, 3, 4, 2); m <- lm(y ~ x); sigma(m)
-    // predict(m, data.frame(x = 5), interval = "confidence")
-    const readings = usedReadings(tableOfCut(bytes, days));
-    expect(readings.map((one) => one.time)).toEqual([0, 8, 10, 0]);
-    const [point] = ordinaryBand(readings, 0.57035182547203012, 2, [5]);
-    expect(point?.estimate).toBeCloseTo(2.614457831325301, 12);
-    expect(point?.lower).toBeCloseTo(1.380075398709488, 9);
-    expect(point?.upper).toBeCloseTo(3.848840263941114, 9);
   });
 });
 

@@ -1,7 +1,7 @@
 /** What was asked of a cut, named by the hash of its one spelling. */
 import { createHash } from 'node:crypto';
-import type { SpecificationInput } from '../../contracts/analysis.ts';
 import { canonicalJson } from '../../analysis-threads/canonical-json.ts';
+import type { SpecificationInput } from '../../contracts/analysis.ts';
 
 export function sha256Of(text: string): string {
   return createHash('sha256').update(text, 'utf8').digest('hex');

@@ -12,16 +12,6 @@ import type { LateReading, PendingVisit } from './cut-rows.ts';
 
 export type CutMeasure = z.infer<typeof cutMeasureSchema>;
 
-/** What a cut says of itself beside its bytes, as it was when frozen. */
-export interface CutDetails {
-  measures: CutMeasure[];
-  late: LateReading[];
-  pending: PendingVisit[];
-  withdrawnLeftOut: { subjects: number; readings: number };
-  ended: EndedSubject[];
-  groups: string[];
-}
-
 export interface StoredDifference {
   against: { id: string; number: number; name: string };
   added: number;
@@ -29,7 +19,7 @@ export interface StoredDifference {
   gone: number;
 }
 
-export interface StoredCut {
+export interface CutRowOfList {
   id: string;
   uid: string;
   number: number;
@@ -38,23 +28,32 @@ export interface StoredCut {
   enteredUntil: Date;
   frozenAt: Date;
   frozenBy: string;
-  exclusions: CutExclusion[];
-  includeWithdrawnReason: string | null;
   rows: number;
   subjects: number;
   late: number;
   pending: number;
   sha256: string;
-  difference: StoredDifference | null;
-  details: CutDetails;
+  measures: CutMeasure[];
 }
 
-/** Counts may be large, details larger: a list leaves out all of the details but the measures. */
+/** What a cut says of itself beside its bytes, as it was when frozen. */
+export interface StoredCut extends CutRowOfList {
+  exclusions: CutExclusion[];
+  includeWithdrawnReason: string | null;
+  withdrawnLeftOut: { subjects: number; readings: number };
+  lateRows: LateReading[];
+  pendingRows: PendingVisit[];
+  ended: EndedSubject[];
+  groups: string[];
+  difference: StoredDifference | null;
+}
+
+/** A list leaves out late and pending rows, which may be many. */
 const SUMMARY_COLUMNS = `cut.id::text, cut.uid, cut.number, cut.name,
   cut.visit_cutoff::text AS "visitCutoff", cut.entered_until AS "enteredUntil",
   cut.frozen_at AS "frozenAt", frozen_by.name AS "frozenBy", cut.row_count::int AS rows,
   cut.subject_count::int AS subjects, cut.late_count::int AS late,
-  cut.pending_count::int AS pending, cut.sha256`;
+  cut.pending_count::int AS pending, cut.sha256, cut.measures`;
 
 const FROM = 'FROM cut JOIN account frozen_by ON frozen_by.id = cut.frozen_by';
 
@@ -68,19 +67,16 @@ const SORT_COLUMNS: Record<z.infer<typeof cutListQuerySchema>['sort'], string> =
   frozenAt: 'cut.frozen_at',
 };
 
-export type SummaryRow = Omit<
-  StoredCut,
-  'exclusions' | 'includeWithdrawnReason' | 'difference' | 'details'
-> & { measures: CutMeasure[] };
-
 export async function findCut(
   manager: EntityManager,
   studyId: string,
   cutUid: string,
 ): Promise<StoredCut | null> {
   const [row]: StoredCut[] = await manager.query(
-    `SELECT ${SUMMARY_COLUMNS}, cut.exclusions, cut.details, cut.difference,
-            cut.withdrawn_included_reason AS "includeWithdrawnReason"
+    `SELECT ${SUMMARY_COLUMNS}, cut.exclusions, cut.difference, cut.ended, cut.groups,
+            cut.withdrawn_included_reason AS "includeWithdrawnReason",
+            cut.withdrawn_left_out AS "withdrawnLeftOut",
+            cut.late_rows AS "lateRows", cut.pending_rows AS "pendingRows"
        ${FROM} WHERE cut.study_id = $1 AND cut.uid = $2`,
     [studyId, cutUid],
   );
@@ -99,14 +95,14 @@ export async function listCuts(
     `SELECT count(*)::int AS total ${FROM} ${where}`,
     [studyId, text],
   );
-  const rows: SummaryRow[] = await manager.query(
-    `SELECT ${SUMMARY_COLUMNS}, cut.details->'measures' AS measures ${FROM} ${where}
+  const rows: CutRowOfList[] = await manager.query(
+    `SELECT ${SUMMARY_COLUMNS} ${FROM} ${where}
       ORDER BY ${SORT_COLUMNS[query.sort]} ${query.direction === 'asc' ? 'ASC' : 'DESC'},
                cut.number DESC
       LIMIT $3 OFFSET $4`,
     [studyId, text, query.pageSize, (query.page - 1) * query.pageSize],
   );
-  return { rows: rows.map((row) => toSummary(row, row.measures)), total: count?.total ?? 0 };
+  return { rows: rows.map(toSummary), total: count?.total ?? 0 };
 }
 
 /** The cut frozen last, which the next one is compared with. */
@@ -122,10 +118,7 @@ export async function lastCut(
 }
 
 /** Row of the database to the answer; the inner id stays inside. */
-export function toSummary(
-  row: Omit<SummaryRow, 'measures'>,
-  measures: readonly CutMeasure[],
-): CutSummary {
+export function toSummary(row: CutRowOfList): CutSummary {
   return {
     id: row.uid,
     number: row.number,
@@ -134,7 +127,7 @@ export function toSummary(
     enteredUntil: row.enteredUntil.toISOString(),
     frozenAt: row.frozenAt.toISOString(),
     frozenBy: row.frozenBy,
-    measures: [...measures],
+    measures: row.measures,
     rows: row.rows,
     subjects: row.subjects,
     late: row.late,

@@ -1,7 +1,7 @@
 /** What a record vouches for, in one spelling; its hash is what a signature is bound to. */
 import { canonicalJson, type JsonValue } from '../../analysis-threads/canonical-json.ts';
 import type { fits, purposes, SpecificationInput } from '../../contracts/analysis.ts';
-import { sha256Of } from '../analysis/specification.ts';
+import { sha256Of } from './specification.ts';
 
 export interface RecordContent {
   cut: { uid: string; number: number; name: string; visitCutoff: string; sha256: string };
