@@ -4,6 +4,7 @@ import { type ProblemCode, problemWords } from '../words/en.ts';
 import type { ProblemWords } from '../words/problem-words.ts';
 
 export type ProblemParams = Readonly<Record<string, string | number>>;
+/** `path` names the entry as in the body; an empty message stands for the sentence of the problem. */
 export type ProblemEntry = { path: string; message: string };
 
 /** Every code a caller may meet, in the order of the tables. */
@@ -45,14 +46,15 @@ export function fillSentence(sentence: string, params: ProblemParams): string {
 
 export function problemDocument(problem: Problem, requestId: string): ProblemDocument {
   const { status, title, detail } = problemTable[problem.code];
+  const sentence = fillSentence(detail, { requestId, ...problem.params });
   return {
     type: `/api/docs#problem-${problem.code}`,
     title,
     status,
-    detail: fillSentence(detail, { requestId, ...problem.params }),
+    detail: sentence,
     code: problem.code,
     params: { ...problem.params },
-    errors: [...problem.errors],
+    errors: problem.errors.map(({ path, message }) => ({ path, message: message || sentence })),
     requestId,
   };
 }

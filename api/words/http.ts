@@ -83,6 +83,11 @@ export const httpProblems = defineProblems({
     title: 'Busy',
     detail: 'Others changed the same rows at this moment. Nothing was kept; try again.',
   },
+  not_ready: {
+    status: 503,
+    title: 'Not ready',
+    detail: 'The database or the file storage can’t be reached at this moment.',
+  },
   failed: {
     status: 500,
     title: 'The server failed',
