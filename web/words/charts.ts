@@ -130,6 +130,8 @@ export const chartsWords = {
     lower: 'lower 95 % limit',
     upper: 'upper 95 % limit',
     method: 'method',
-    open: 'unbounded',
+    note: 'note',
+    upTo: (limit: string) => `unbounded to ${limit}`,
+    from: (limit: string) => `${limit} to unbounded`,
   },
 } as const;

@@ -83,6 +83,10 @@ export function Cord({ visits, today, endedAt = null, endWord = null, scale }: P
           <End
             place={runs.solid.to}
             word={endWord}
+            onKnot={shown.some(
+              (visit) =>
+                Math.abs(placeOf(knotDay(visit) ?? 0, scale) - (runs.solid?.to ?? 0)) < 1.5,
+            )}
             crowded={brackets.some(
               (visit) => placeOf(visit.windowTo ?? 0, scale) > (runs.solid?.to ?? 0) - 20,
             )}
@@ -129,23 +133,30 @@ function Bracket({ visit, scale }: { visit: CordVisit; scale: CordScale }) {
   );
 }
 
-/** The word stands after the cap where there is room, else under the cord, or over it beside a bracket. */
-function End({ place, word, crowded }: { place: number; word: string | null; crowded: boolean }) {
-  const room = place < 72;
+/**
+ * The cap stands a little past a knot that it would hide. Its word stands after it where there is room,
+ * else under the cord, or over it beside a bracket.
+ */
+function End(props: { place: number; word: string | null; onKnot: boolean; crowded: boolean }) {
+  const room = props.place < 72;
+  const on = props.onKnot ? 10 : 0;
   return (
-    <At place={place}>
-      <EndCap />
-      {word && (
-        <text
-          x={room ? 8 : 1}
-          y={room ? 4.5 : crowded ? -9 : CORD.word - CORD.line}
-          textAnchor={room ? 'start' : 'end'}
-          fontSize={13}
-          fill="var(--color-ink)"
-        >
-          {word}
-        </text>
-      )}
+    <At place={props.place}>
+      {on > 0 && <line x2={on} stroke="var(--color-ink)" strokeWidth={1.5} />}
+      <g transform={`translate(${on} 0)`}>
+        <EndCap />
+        {props.word && (
+          <text
+            x={room ? 8 : 1}
+            y={room ? 4.5 : props.crowded ? -9 : CORD.word - CORD.line}
+            textAnchor={room ? 'start' : 'end'}
+            fontSize={13}
+            fill="var(--color-ink)"
+          >
+            {props.word}
+          </text>
+        )}
+      </g>
     </At>
   );
 }

@@ -42,11 +42,10 @@ export function Figure({
   const inner = { width: FILE_WIDTH, height: heightFor(FILE_WIDTH) };
   return (
     <figure aria-labelledby={title} className="min-w-0">
-      <Heading id={title} className="text-17 font-semibold">
-        {picture.title}
-      </Heading>
-      <div className="no-print mt-1 flex flex-wrap items-center justify-between gap-x-4">
-        <div className="flex flex-wrap items-center gap-x-4">{controls}</div>
+      <div className="flex flex-wrap items-baseline justify-between gap-x-4">
+        <Heading id={title} className="text-17 font-semibold">
+          {picture.title}
+        </Heading>
         <FileLine
           picture={picture}
           asTable={asTable}
@@ -54,7 +53,10 @@ export function Figure({
           make={(kind) => pictureFile(kind, picture, inner, marks)}
         />
       </div>
-      <div ref={box} className="mt-1">
+      {controls && (
+        <div className="no-print mt-1 flex flex-wrap items-center gap-x-6 gap-y-1">{controls}</div>
+      )}
+      <div ref={box} className="mt-2">
         {asTable ? (
           <TwinTable table={picture.table} title={picture.title} stamp={picture.stamp} />
         ) : (
@@ -88,7 +90,7 @@ function FileLine(props: {
     }
   };
   return (
-    <div className="flex flex-wrap items-center gap-x-2 text-13">
+    <div className="no-print ml-auto flex flex-wrap items-center gap-x-2 text-13">
       <span role="status" className="text-faded">
         {said}
       </span>

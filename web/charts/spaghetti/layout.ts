@@ -69,7 +69,8 @@ export function layoutOf(data: SpaghettiData, size: Size, stamped: boolean): Lay
   const bottom = size.height - 68;
   const yTicks = ticksFor(yDomain, Math.max(3, Math.round((bottom - top) / 70)));
   const widest = Math.max(...yTicks.map((tick) => textWidth(tick.text, 13, 'mono')));
-  const left = Math.ceil(widest) + 14;
+  // Room for the first n and the letter before it.
+  const left = Math.max(Math.ceil(widest) + 14, 46);
   const right = size.width - 14;
   const x = scaleLinear([first, last], [left, right]);
   const y = scaleLinear(yDomain, [bottom, top]);

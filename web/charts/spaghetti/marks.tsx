@@ -1,7 +1,7 @@
 /** The spaghetti plot itself: axes, subjects, pooled lines, the picked subject. Pure SVG. */
 import { useMemo } from 'react';
 import { chartsWords } from '../../words/charts.ts';
-import { AxisName, FigureRow, LeftAxis, r } from '../marks/axes.tsx';
+import { AxisName, FigureRow, LeftAxis } from '../marks/axes.tsx';
 import { StampMark } from '../marks/stamp-mark.tsx';
 import type { Size } from '../picture/types.ts';
 import { type Layout, layoutOf } from './layout.ts';
@@ -95,7 +95,7 @@ function Foot({ layout, data }: { layout: Layout; data: SpaghettiData }) {
         x={layout.x}
         y={layout.bottom + 40}
         label={words.n}
-        labelAt={r(Math.max(10, layout.left - 14))}
+        labelAt={10}
       />
       <AxisName x={(layout.left + layout.right) / 2} y={layout.bottom + 61}>
         {data.timeName}

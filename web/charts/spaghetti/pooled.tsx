@@ -92,23 +92,29 @@ function Stretch({ run, layout, dash }: { run: Run; layout: Layout; dash: string
   );
 }
 
-/** Names at the right end of the strong part, under a falling line and over a rising one, kept apart. */
+/**
+ * Names at the right end of the strong part: the highest line's over it, the lowest line's under it, and
+ * a single line's on the side that its slope leaves free.
+ */
 function labelsOf(lines: readonly PooledLine[], layout: Layout, lineName: string) {
-  const labels = lines.flatMap((each) => {
+  const ends = lines.flatMap((each) => {
     const strong = each.points.filter((point) => point.remaining >= FEW_SUBJECTS);
     const points = strong.length > 1 ? strong : each.points;
     const last = points.at(-1);
     const first = points[0];
-    if (!last || !first) return [];
-    const falls = last.estimate < first.estimate;
-    const edge = falls ? (last.lower ?? last.estimate) : (last.upper ?? last.estimate);
-    const y = Math.min(
-      layout.bottom - 4,
-      Math.max(layout.top + 10, layout.y(edge) + (falls ? 17 : -8)),
-    );
-    return [{ x: layout.x(last.time) - 6, y, text: each.group ?? lineName }];
+    return last && first ? [{ last, falls: last.estimate < first.estimate, each }] : [];
   });
-  labels.sort((a, b) => a.y - b.y);
+  ends.sort((a, b) => b.last.estimate - a.last.estimate);
+  const labels = ends.map(({ last, falls, each }, index) => {
+    const under = ends.length === 1 ? falls : index > 0;
+    const edge = under ? (last.lower ?? last.estimate) : (last.upper ?? last.estimate);
+    const y = layout.y(edge) + (under ? 17 : -8);
+    return {
+      x: layout.x(last.time) - 6,
+      y: Math.min(layout.bottom - 4, Math.max(layout.top + 10, y)),
+      text: each.group ?? lineName,
+    };
+  });
   labels.forEach((label, index) => {
     const above = labels[index - 1];
     if (above && label.y - above.y < LABEL_GAP) label.y = above.y + LABEL_GAP;
