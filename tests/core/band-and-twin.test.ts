@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { dealtTwin, ordinaryBand, pooledBand, residualsOf } from '../../core/index.ts';
 import { differences } from './support/differences.ts';
-import { analyseReference, present, rowsOf, tableOf } from './support/engine.ts';
+import { analyseReference, pooledOf, rowsOf, tableOf } from './support/engine.ts';
 import { DATA_SETS, referenceAnalyses, referenceAnalysis } from './support/reference.ts';
 
 const cases = DATA_SETS.flatMap((folder) =>
@@ -61,10 +61,7 @@ test('the ordinary band is confint of lm: at time 0 it is the interval of the in
 test('the pooled band at time 0 is the pooled intercept', () => {
   const reference = referenceAnalysis('orthodont', 'by sex');
   const table = tableOf(rowsOf('orthodont', reference));
-  const pooled = present(
-    analyseReference('orthodont', reference, { only: ['cr'] }).pooled,
-    'pooled',
-  );
-  const { estimate, lower, upper, df } = pooled.coefficients.intercept!;
+  const result = analyseReference('orthodont', reference, { only: ['cr'] });
+  const { estimate, lower, upper, df } = pooledOf(result, 'intercept');
   expect(differences(pooledBand(table, [0])[0], { estimate, lower, upper, df }, 1e-12)).toEqual([]);
 });

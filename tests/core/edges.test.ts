@@ -5,6 +5,7 @@ import {
   analyseReference,
   analyseRows,
   type Options,
+  pooledOf,
   present,
   type Result,
   type Row,
@@ -203,7 +204,7 @@ describe('no residual variance', () => {
     expect(i.lr_test).toBeNull();
     expect(i.permutation).toBeNull();
     expect(i.design_effect).toBeNull();
-    const time = present(result.pooled?.coefficients.time, 'time');
+    const time = pooledOf(result, 'time');
     const [first, last] = [rows[0]!, rows[2]!];
     const slope = (last[2] - first[2]) / (last[1] - first[1]);
     expect(time.estimate).toBeCloseTo(slope, 6);
@@ -302,7 +303,7 @@ describe('extreme leverage', () => {
 
   test('a slope that one subject holds gets no headline p and names the subject', () => {
     const result = answer(rows);
-    const time = present(result.pooled?.coefficients.time, 'time');
+    const time = pooledOf(result, 'time');
     expect(time.p).toBeNull();
     expect(time.se_cr3).toBeNull();
     expect(reasonOf(time, 'p')).toContain('far');
@@ -318,7 +319,7 @@ describe('extreme leverage', () => {
   ])('nearly so, %s: errors and df as clubSandwich gives them', (name, tolerance) => {
     const reference = referenceAnalysis('leverage', name);
     const result = analyseReference('leverage', reference, { only: ['cr'] });
-    const time = present(result.pooled?.coefficients.time, 'time');
+    const time = pooledOf(result, 'time');
     const { estimate, se_cr0, se_cr1, se_cr2, se_cr3, df } = reference.pooled.coefficients.time!;
     expect(differences(time, { estimate, se_cr0, se_cr1, se_cr2, se_cr3, df }, tolerance)).toEqual(
       [],
@@ -329,7 +330,7 @@ describe('extreme leverage', () => {
 test('numbers of very different size keep their digits', () => {
   const small = answer(ordinary());
   const large = answer(ordinary().map(([s, t, y]): Row => [s, t * 1e-6 + 2026, y * 1e9 - 4e12]));
-  const [a, b] = [small, large].map((r) => present(r.pooled?.coefficients.time, 'time'));
+  const [a, b] = [small, large].map((r) => pooledOf(r, 'time'));
   expect(b!.estimate / (a!.estimate * 1e15)).toBeCloseTo(1, 6);
   expect(b!.df! / a!.df!).toBeCloseTo(1, 6);
 });
@@ -358,7 +359,7 @@ describe('the lock', () => {
     expect(typeof locked.ols_locked).toBe('string');
     expect(holes(locked)).toEqual([]);
     // Locked means that no ordinary error or p stands anywhere; the ratio of errors does.
-    expect(Object.keys(present(locked.pooled?.coefficients.time, 'time'))).not.toContain('se_ols');
+    expect(Object.keys(pooledOf(locked, 'time'))).not.toContain('se_ols');
     expect(locked.independence?.se_ratio?.time).toBeTypeOf('number');
     const open = answer(ordinary());
     expect(open.ols?.coefficients.time?.se).toBeCloseTo(0.8614679, 7);

@@ -3,6 +3,7 @@ import { differences } from './support/differences.ts';
 import {
   analyseReference,
   analyseRows,
+  pooledOf,
   present,
   type Result,
   type Row,
@@ -12,9 +13,6 @@ import { referenceAnalysis } from './support/reference.ts';
 
 // What algebra says of special tables, independent of any reference implementation.
 
-const pooled = (result: Result, name: string) =>
-  present(present(result.pooled, 'pooled').coefficients[name], name);
-
 describe('a balanced table with the same times for all (sleepstudy)', () => {
   const result = analyseReference('sleepstudy', referenceAnalysis('sleepstudy', 'full'), {
     draws: 199,
@@ -23,7 +21,7 @@ describe('a balanced table with the same times for all (sleepstudy)', () => {
   test.each(['intercept', 'time'])(
     '%s: CR1 = CR2, CR3 = CR2 G/(G-1) to a root, df = G - 1',
     (name) => {
-      const c = pooled(result, name);
+      const c = pooledOf(result, name);
       // I - S_i has the eigenvalue 1 - 1/G twice: CR2 is CR0 G/(G-1), CR3 is CR0 (G/(G-1))^2.
       expect(differences(c.se_cr2, present(c.se_cr1, 'cr1'), 1e-12)).toEqual([]);
       expect(differences(c.se_cr2, present(c.se_cr0, 'cr0') * Math.sqrt(18 / 17), 1e-12)).toEqual(
@@ -36,17 +34,17 @@ describe('a balanced table with the same times for all (sleepstudy)', () => {
 
   test('the errors are those that maximum likelihood and REML give the random slope', () => {
     // Bates et al. 2015 print 6.825 and 1.546 (REML); ML 6.63228, 1.50224 (computed in R).
-    expect(pooled(result, 'intercept').se_cr0).toBeCloseTo(6.63228, 5);
-    expect(pooled(result, 'time').se_cr0).toBeCloseTo(1.50224, 5);
-    expect(pooled(result, 'intercept').se_cr2).toBeCloseTo(6.82456, 5);
-    expect(pooled(result, 'time').se_cr2).toBeCloseTo(1.54579, 5);
-    expect(pooled(result, 'intercept').se_cr3).toBeCloseTo(7.02241, 5);
-    expect(pooled(result, 'time').se_cr3).toBeCloseTo(1.5906, 5);
+    expect(pooledOf(result, 'intercept').se_cr0).toBeCloseTo(6.63228, 5);
+    expect(pooledOf(result, 'time').se_cr0).toBeCloseTo(1.50224, 5);
+    expect(pooledOf(result, 'intercept').se_cr2).toBeCloseTo(6.82456, 5);
+    expect(pooledOf(result, 'time').se_cr2).toBeCloseTo(1.54579, 5);
+    expect(pooledOf(result, 'intercept').se_cr3).toBeCloseTo(7.02241, 5);
+    expect(pooledOf(result, 'time').se_cr3).toBeCloseTo(1.5906, 5);
   });
 
   test('the pooled slope is the mean of the own slopes, and so are its error and interval', () => {
     const own = present(result.per_subject, 'per_subject');
-    const slope = pooled(result, 'time');
+    const slope = pooledOf(result, 'time');
     const want = {
       mean_slope: slope.estimate,
       sd_slope: present(slope.se_cr2, 'se') * Math.sqrt(18),
@@ -87,11 +85,11 @@ test('two groups: the same lines and errors as each group alone', () => {
       rows.filter((row) => row[3] === sex).map(([subject, t, y]): Row => [subject, t, y]),
       { only: ['cr'] },
     );
-  const girls = pooled(alone('Female'), 'time');
-  const boys = pooled(alone('Male'), 'time');
-  expect(pooled(both, 'time').estimate).toBeCloseTo(girls.estimate, 10);
-  expect(differences(pooled(both, 'time').se_cr2, girls.se_cr2, 1e-10)).toEqual([]);
-  const difference = pooled(both, 'time_by_group');
+  const girls = pooledOf(alone('Female'), 'time');
+  const boys = pooledOf(alone('Male'), 'time');
+  expect(pooledOf(both, 'time').estimate).toBeCloseTo(girls.estimate, 10);
+  expect(differences(pooledOf(both, 'time').se_cr2, girls.se_cr2, 1e-10)).toEqual([]);
+  const difference = pooledOf(both, 'time_by_group');
   expect(difference.estimate).toBeCloseTo(boys.estimate - girls.estimate, 10);
   const error = Math.hypot(present(girls.se_cr2, 'girls'), present(boys.se_cr2, 'boys'));
   expect(differences(difference.se_cr2, error, 1e-10)).toEqual([]);

@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 import { covariateDesign } from '../../core/linear/design.ts';
 import { coefficientDirections, fitOls, ordinaryError } from '../../core/linear/fit-ols.ts';
-import { analyseRows, present, type Row } from './support/engine.ts';
+import { analyseRows, pooledOf, present, type Row } from './support/engine.ts';
 import { referencePath } from './support/reference.ts';
 
 // NIST/ITL Statistical Reference Datasets. The files in tests/reference/nist hold the certified values.
@@ -117,7 +117,7 @@ describe('one-way analysis of variance', () => {
     const anova = present(result.independence?.anova, 'anova');
     expect(digits(anova.msb, 1.68 / 8)).toBeGreaterThan(10);
     expect(anova.n0).toBe(21);
-    const slope = present(result.pooled?.coefficients.time?.estimate, 'slope');
+    const slope = pooledOf(result, 'time').estimate;
     const sxx = (9 * (21 * (21 ** 2 - 1))) / 12;
     expect(digits(anova.msw + (slope ** 2 * sxx) / 180, 0.01)).toBeGreaterThan(10);
   });

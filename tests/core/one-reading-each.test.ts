@@ -1,7 +1,7 @@
 import fc from 'fast-check';
 import { expect, test } from 'vitest';
 import { differences } from './support/differences.ts';
-import { analyseRows, present, type Row } from './support/engine.ts';
+import { analyseRows, pooledOf, present, type Row } from './support/engine.ts';
 import { holes } from './support/no-holes.ts';
 
 // With one reading per subject the cluster-robust errors are those for unequal variances: CR0 is White's
@@ -51,7 +51,7 @@ test('CR0 = HC0, CR2 = HC2, CR3 = HC3, and what needs repeats is null with a rea
     fc.property(points, (list) => {
       const rows = list.map(([x, y], i): Row => [`one-${i}`, x, y]);
       const result = analyseRows(rows, { draws: 99 });
-      const time = present(result.pooled?.coefficients.time, 'time');
+      const time = pooledOf(result, 'time');
       const want = robustByHand(list);
       expect(
         differences(

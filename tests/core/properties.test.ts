@@ -1,7 +1,14 @@
 import fc from 'fast-check';
 import { describe, expect, test } from 'vitest';
 import { differences } from './support/differences.ts';
-import { analyseRows, type Options, present, type Result, type Row } from './support/engine.ts';
+import {
+  analyseRows,
+  type Options,
+  pooledOf,
+  present,
+  type Result,
+  type Row,
+} from './support/engine.ts';
 import { holes } from './support/no-holes.ts';
 
 // Random small tables: 3 to 7 subjects with 1 to 5 readings at distinct times of a coarse grid, and
@@ -134,8 +141,7 @@ function moved(
   c: number,
   d: number,
 ): Record<string, unknown> {
-  const p = present(result.pooled, 'pooled').coefficients;
-  const time = present(p.time, 'time');
+  const time = pooledOf(result, 'time');
   const scaled = (x: number | null) => (x === null ? null : Math.abs(b / d) * x);
   const slope = (b / d) * time.estimate;
   const flipped = Math.sign(b / d);
@@ -153,7 +159,7 @@ function moved(
     p: time.p,
     lower: limits[0],
     upper: limits[1],
-    intercept: a + b * present(p.intercept, 'intercept').estimate - slope * c,
+    intercept: a + b * pooledOf(result, 'intercept').estimate - slope * c,
   };
 }
 
@@ -170,10 +176,9 @@ describe('shifting and scaling', () => {
       fc.property(tables, numbers, (rows, { a, b, c, d }) => {
         const before = analyse(rows);
         const after = analyse(rows.map(([s, t, y]): Row => [s, c + d * t, a + b * y]));
-        const p = present(after.pooled, 'pooled').coefficients;
         const got = {
-          ...present(p.time, 'time'),
-          intercept: present(p.intercept, 'intercept').estimate,
+          ...pooledOf(after, 'time'),
+          intercept: pooledOf(after, 'intercept').estimate,
         };
         // The new intercept may be small beside the numbers it is made of.
         const size = 1 + Math.abs(a) + Math.abs(c * got.estimate);

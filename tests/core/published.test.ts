@@ -1,5 +1,12 @@
 import { describe, expect, test } from 'vitest';
-import { analyseReference, analyseRows, present, type Result, type Row } from './support/engine.ts';
+import {
+  analyseReference,
+  analyseRows,
+  pooledOf,
+  present,
+  type Result,
+  type Row,
+} from './support/engine.ts';
 import { referenceAnalysis } from './support/reference.ts';
 
 // Numbers from outside, each with where it stands. "Computed" ones were made in R 4.2.2 by other hands
@@ -11,8 +18,6 @@ const near = (got: number | null | undefined, want: string): void => {
   expect(present(got, want)).toBeLessThanOrEqual(Number(want) + 0.50001 * 10 ** -decimals);
 };
 
-const pooledOf = (result: Result, name: string) =>
-  present(present(result.pooled, 'pooled').coefficients[name], name);
 const olsOf = (result: Result, name: string) =>
   present(present(result.ols, 'ols').coefficients[name], name);
 const run = (folder: string, name: string): Result =>

@@ -1,4 +1,4 @@
-import { spawnSync } from 'node:child_process';
+import { spawn } from 'node:child_process';
 import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -12,15 +12,42 @@ export interface Outcome {
   stderr: string;
 }
 
-/** Runs the headless command as `npm run --silent analyse -- …` does. */
-export function command(...args: string[]): Outcome {
-  const { status, stdout, stderr, error } = spawnSync(
-    process.execPath,
-    ['--import', 'tsx', 'api/cli/analyse.ts', ...args],
-    { cwd: repository, encoding: 'utf8', maxBuffer: 64 * 1024 * 1024, timeout: 60_000 },
-  );
-  if (error) throw error;
-  return { code: status, stdout, stderr };
+const AT_ONCE = 2;
+let running = 0;
+const waiting: (() => void)[] = [];
+
+/** Runs the headless command as `npm run --silent analyse -- …` does; at most two at a time. */
+export async function command(...args: string[]): Promise<Outcome> {
+  if (running >= AT_ONCE) await new Promise<void>((go) => waiting.push(go));
+  running++;
+  try {
+    return await run(args);
+  } finally {
+    running--;
+    waiting.shift()?.();
+  }
+}
+
+function run(args: string[]): Promise<Outcome> {
+  return new Promise((resolve, reject) => {
+    const child = spawn(process.execPath, ['--import', 'tsx', 'api/cli/analyse.ts', ...args], {
+      cwd: repository,
+      stdio: ['ignore', 'pipe', 'pipe'],
+      timeout: 60_000,
+    });
+    const out: Buffer[] = [];
+    const err: Buffer[] = [];
+    child.stdout.on('data', (chunk: Buffer) => out.push(chunk));
+    child.stderr.on('data', (chunk: Buffer) => err.push(chunk));
+    child.on('error', reject);
+    child.on('close', (code) =>
+      resolve({
+        code,
+        stdout: Buffer.concat(out).toString(),
+        stderr: Buffer.concat(err).toString(),
+      }),
+    );
+  });
 }
 
 /** A folder of files for one test file, removed by `clear`. */

@@ -42,6 +42,12 @@ export function analyseReference(
   return analyseRows(rowsOf(folder, reference), { acknowledge: ACKNOWLEDGE, ...options });
 }
 
+/** One coefficient of the pooled line, which must be there. */
+export function pooledOf(result: Result, name: string) {
+  const { coefficients } = present(result.pooled, 'pooled');
+  return present(present(coefficients, 'coefficients')[name], name);
+}
+
 /** A block of the result that must be there; its reason is in the failure when it is not. */
 export function present<T>(block: T | null | undefined, name: string): T {
   if (block === null || block === undefined) throw new Error(`${name} is missing from the result`);
