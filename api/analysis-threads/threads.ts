@@ -1,6 +1,4 @@
 /** The server's side of the computing threads: the event loop only hands over bytes and takes answers. */
-import { createRequire } from 'node:module';
-import { pathToFileURL } from 'node:url';
 import { Piscina } from 'piscina';
 import type { CutDifferenceCounts } from './difference.ts';
 import type { Answer, CheckAnswer, CutJob, FitAnswer, FitJob } from './jobs.ts';
@@ -21,14 +19,11 @@ export function createAnalysisThreads(
   maxThreads: number,
   onError: (error: Error) => void,
 ): AnalysisThreads {
-  const source = import.meta.url.endsWith('.ts');
-  const worker = new URL(source ? './worker.ts' : './worker.js', import.meta.url);
   const pool = new Piscina({
-    filename: worker.href,
+    filename: new URL('./worker-entry.mjs', import.meta.url).href,
     minThreads: 0,
     maxThreads,
     idleTimeout: 60_000,
-    execArgv: source ? ['--import', loaderOfTypeScript()] : [],
   });
   pool.on('error', onError);
   return {
@@ -37,9 +32,4 @@ export function createAnalysisThreads(
     fit: (job) => pool.run(job, { name: 'fit' }),
     close: () => pool.destroy(),
   };
-}
-
-/** A thread does not inherit the loader of its parent where that was registered in code. */
-function loaderOfTypeScript(): string {
-  return pathToFileURL(createRequire(import.meta.url).resolve('tsx')).href;
 }

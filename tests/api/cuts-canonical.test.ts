@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { differenceOfCuts } from '../../api/analysis-threads/difference.ts';
 import { CanonicalCsvWriter, columnOrder } from '../../api/features/cuts/canonical-csv.ts';
 import {
   type CutPlan,
@@ -9,7 +10,6 @@ import {
   type SubjectOfCut,
 } from '../../api/features/cuts/cut-rows.ts';
 import { addDays, daysBetween, isCalendarDay } from '../../api/features/cuts/days.ts';
-import { differenceOfCuts } from '../../api/analysis-threads/difference.ts';
 import { numberText } from '../../api/features/cuts/number-text.ts';
 
 describe('number text', () => {
@@ -157,9 +157,9 @@ describe('rows of a subject', () => {
   });
 
   it('expects nothing of a subject who had ended before the window closed', () => {
-    const died = { ...subject, state: 'died', stateDate: '2026-02-28' };
+    const died: SubjectOfCut = { ...subject, state: 'died', stateDate: '2026-02-28' };
     expect(rowsOfSubject(died, plan, []).pending).toEqual([]);
-    const stopped = {
+    const stopped: SubjectOfCut = {
       ...subject,
       state: 'stopped the intervention but followed',
       stateDate: '2026-02-01',

@@ -1,10 +1,10 @@
 /** Puts a cut together from the snapshot: its bytes, their hash, and what the cut says of itself. */
 import type { EntityManager } from 'typeorm';
 import type { CutExclusion } from '../../contracts/cuts.ts';
+import { endOfFollowUp } from '../subjects/state-steps.ts';
 import { CanonicalCsvWriter } from './canonical-csv.ts';
 import {
   type CutPlan,
-  ENDING_STATES,
   type LateReading,
   type PendingVisit,
   rowsOfSubject,
@@ -129,17 +129,12 @@ function bySubject(exclusions: readonly CutExclusion[]): Map<string, CutExclusio
   return lists;
 }
 
+/** Who completed did not end early, so is no dropout. */
 function endOf(subject: SubjectOfCut, cutoff: string): EndedSubject | null {
-  if (!ENDING_STATES.has(subject.state)) {
+  const end = endOfFollowUp(subject.state, subject.stateDate);
+  if (end === null || end > cutoff || subject.state === 'completed') {
     return null;
   }
-  if (subject.stateDate !== null && subject.stateDate > cutoff) {
-    return null;
-  }
-  const dated = subject.stateDate !== null && subject.baselineDate !== null;
-  return {
-    code: subject.code,
-    word: subject.state,
-    day: dated ? daysBetween(subject.baselineDate as string, subject.stateDate as string) : null,
-  };
+  const day = subject.baselineDate === null ? null : daysBetween(subject.baselineDate, end);
+  return { code: subject.code, word: subject.state, day };
 }

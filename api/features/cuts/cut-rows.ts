@@ -2,6 +2,8 @@
  * The rows of one subject in a cut, from what the database holds of that subject. Pure: no clock, no
  * queries; the caller brings subjects in order of their code.
  */
+import type { SubjectState } from '../../contracts/subjects.ts';
+import { endOfFollowUp } from '../subjects/state-steps.ts';
 import { addDays, daysBetween } from './days.ts';
 import { numberText } from './number-text.ts';
 
@@ -42,7 +44,7 @@ export interface SubjectOfCut {
   site: string;
   group: string | null;
   baselineDate: string | null;
-  state: string;
+  state: SubjectState;
   stateDate: string | null;
   /** In order of entry. */
   visits: readonly VisitOfCut[];
@@ -105,15 +107,6 @@ export interface RowsOfSubject {
 
 /** The label of a visit outside the plan. */
 export const UNSCHEDULED = 'unscheduled';
-
-/** States after which no visit is due any more; who stopped the intervention is still followed. */
-export const ENDING_STATES: ReadonlySet<string> = new Set([
-  'screen failed',
-  'withdrawn from visits',
-  'consent withdrawn',
-  'lost to follow-up',
-  'died',
-]);
 
 interface Draft extends CutRow {
   order: number;
@@ -244,9 +237,8 @@ function windowClosed(
   if (lastDay > cutoff) {
     return null;
   }
-  const ended =
-    ENDING_STATES.has(subject.state) && (subject.stateDate === null || subject.stateDate < lastDay);
-  return ended ? null : lastDay;
+  const end = endOfFollowUp(subject.state, subject.stateDate);
+  return end !== null && end < lastDay ? null : lastDay;
 }
 
 function newDraft(

@@ -24,7 +24,7 @@ interface SnapshotRow {
   site: string;
   group: string | null;
   baseline_date: string | null;
-  state: string;
+  state: SubjectOfCut['state'];
   state_date: string | null;
   visits: VisitCells[] | null;
   readings: ReadingCells[] | null;
