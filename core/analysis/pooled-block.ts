@@ -13,12 +13,7 @@ export function robustContrasts(model: MeanModel): ClusterContrast[] {
 
 /** Subjects that alone fix a direction of the model, by code. */
 export function fixingSubjects(model: MeanModel): string[] {
-  const { basis, table } = model;
-  const { p } = basis.fit;
-  return table.subjects.filter((_, i) => {
-    for (let k = 0; k < p; k++) if (basis.lambda[i * p + k] === 1) return true;
-    return false;
-  });
+  return codesOf(model, model.basis.fixing);
 }
 
 function codesOf(model: MeanModel, indices: readonly number[]): string[] {

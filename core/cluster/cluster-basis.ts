@@ -1,6 +1,9 @@
 import type { OlsFit } from '../linear/fit-ols.ts';
 import { symmetricEigen } from '../linear/symmetric-eigen.ts';
 
+/** Above this leverage a subject's pairs are added one by one where sums of squares would cancel. */
+const EXTREME_LEVERAGE = 0.9;
+
 /** An eigenvalue of a subject's leverage from here on counts as one: the subject alone fixes a direction. */
 export const FIXES_A_DIRECTION = 1 - 1e-12;
 
@@ -25,6 +28,12 @@ export interface ClusterBasis {
   readonly vectors: Float64Array;
   /** G × p: E_i'c_i. */
   readonly turned: Float64Array;
+  /** G × p: f(λ) of CR2, (1 − λ)^(−½), and 0 where the subject fixes the direction. */
+  readonly cr2: Float64Array;
+  /** Subjects with an eigenvalue above .9: at most p/.9 of them, as ΣS_i = I. */
+  readonly extreme: readonly number[];
+  /** Those among them that fix a direction. */
+  readonly fixing: readonly number[];
 }
 
 function sumsForTwo(fit: OlsFit, start: Int32Array, s: Float64Array, c: Float64Array): void {
@@ -88,46 +97,63 @@ export function clusterBasis(fit: OlsFit, start: Int32Array): ClusterBasis {
   if (p === 2) sumsForTwo(fit, start, s, c);
   else sumsForAny(fit, start, s, c);
   const { values, vectors } = symmetricEigen(s, count, p);
-  for (let k = 0; k < values.length; k++) {
-    const value = values[k]!;
-    values[k] = value >= FIXES_A_DIRECTION ? 1 : Math.max(0, value);
+  const cr2 = new Float64Array(count * p);
+  const extreme: number[] = [];
+  const fixing: number[] = [];
+  for (let i = 0; i < count; i++) {
+    let largest = 0;
+    for (let at = i * p; at < (i + 1) * p; at++) {
+      const value = values[at]!;
+      const fixes = value >= FIXES_A_DIRECTION;
+      values[at] = fixes ? 1 : Math.max(0, value);
+      cr2[at] = fixes ? 0 : 1 / Math.sqrt(1 - values[at]!);
+      largest = Math.max(largest, values[at]!);
+    }
+    if (largest > EXTREME_LEVERAGE) extreme.push(i);
+    if (largest === 1) fixing.push(i);
   }
   const turned = new Float64Array(count * p);
-  for (let i = 0; i < count; i++) {
-    for (let k = 0; k < p; k++) {
-      let sum = 0;
-      for (let a = 0; a < p; a++) sum += vectors[(i * p + a) * p + k]! * c[i * p + a]!;
-      turned[i * p + k] = sum;
-    }
-  }
-  return { fit, count, start, s, c, lambda: values, vectors, turned };
+  for (let i = 0; i < count; i++) turnInto(vectors, i, p, c, i * p, turned);
+  return { fit, count, start, s, c, lambda: values, vectors, turned, cr2, extreme, fixing };
 }
 
-/** E_i'h (p) of subject i, written into `into`. */
-export function turn(basis: ClusterBasis, i: number, h: Float64Array, into: Float64Array): void {
-  const { p } = basis.fit;
+/** Writes E_i'x (p), x at x[from], to its place in a G × p array. */
+function turnInto(
+  vectors: Float64Array,
+  i: number,
+  p: number,
+  x: Float64Array,
+  from: number,
+  into: Float64Array,
+): void {
   for (let k = 0; k < p; k++) {
     let sum = 0;
-    for (let a = 0; a < p; a++) sum += basis.vectors[(i * p + a) * p + k]! * h[a]!;
-    into[k] = sum;
+    for (let a = 0; a < p; a++) sum += vectors[(i * p + a) * p + k]! * x[from + a]!;
+    into[i * p + k] = sum;
   }
 }
 
-/** The subjects that alone fix a direction the contrast h has a part in; their CR2 error is too small. */
-export function subjectsThatFix(basis: ClusterBasis, h: Float64Array): number[] {
+/** E_i'h of every subject (G × p), for the direction h (p) of a contrast. */
+export function turnDirection(basis: ClusterBasis, h: Float64Array): Float64Array {
   const { p } = basis.fit;
-  const along = new Float64Array(p);
-  let length = 0;
-  for (const x of h) length += x * x;
-  const found: number[] = [];
-  for (let i = 0; i < basis.count; i++) {
-    turn(basis, i, h, along);
+  const turned = new Float64Array(basis.count * p);
+  for (let i = 0; i < basis.count; i++) turnInto(basis.vectors, i, p, h, 0, turned);
+  return turned;
+}
+
+/**
+ * The subjects that alone fix a direction the contrast has a part in; its CR2 error is too small. `along` is the
+ * contrast's `turnDirection`.
+ */
+export function subjectsThatFix(basis: ClusterBasis, along: Float64Array): number[] {
+  const { p } = basis.fit;
+  return basis.fixing.filter((i) => {
+    let length = 0;
+    for (let k = 0; k < p; k++) length += along[i * p + k]! ** 2;
     for (let k = 0; k < p; k++) {
-      if (basis.lambda[i * p + k] === 1 && along[k]! ** 2 > 1e-8 * length) {
-        found.push(i);
-        break;
-      }
+      const at = i * p + k;
+      if (basis.lambda[at] === 1 && along[at]! ** 2 > 1e-8 * length) return true;
     }
-  }
-  return found;
+    return false;
+  });
 }

@@ -1,6 +1,6 @@
 import { studentQuantile, studentTwoSided } from '../distributions/student-t.ts';
 import type { ClusterBasis } from './cluster-basis.ts';
-import { subjectsThatFix } from './cluster-basis.ts';
+import { subjectsThatFix, turnDirection } from './cluster-basis.ts';
 import { type ClusterErrors, clusterErrors } from './sandwich.ts';
 import { satterthwaiteDf } from './satterthwaite.ts';
 
@@ -28,9 +28,10 @@ export function clusterContrast(
   h: Float64Array,
   estimate: number,
 ): ClusterContrast {
-  const errors = clusterErrors(basis, h);
-  const df = satterthwaiteDf(basis, h);
-  const fixedBy = subjectsThatFix(basis, h);
+  const along = turnDirection(basis, h);
+  const errors = clusterErrors(basis, along);
+  const df = satterthwaiteDf(basis, along);
+  const fixedBy = subjectsThatFix(basis, along);
   const exact = !basis.fit.hasVariance;
   const t = exact || !(errors.cr2 > 0) ? null : estimate / errors.cr2;
   const usable = fixedBy.length === 0 && df !== null && (exact || errors.cr2 > 0);

@@ -1,10 +1,7 @@
 import { fUpper } from '../distributions/f.ts';
 import { cholesky, solveCholesky } from '../linear/small-matrix.ts';
 import { symmetricEigen } from '../linear/symmetric-eigen.ts';
-import type { ClusterBasis } from './cluster-basis.ts';
-import { turn } from './cluster-basis.ts';
-import { cr2Factor } from './sandwich.ts';
-import { extremeSubjects } from './satterthwaite.ts';
+import { type ClusterBasis, turnDirection } from './cluster-basis.ts';
 
 /** A small-sample F test of several contrasts at once. */
 export interface JointTest {
@@ -23,6 +20,18 @@ interface Parts {
   readonly u: Float64Array;
 }
 
+/** f(Λ_i)E_i'h of every subject (G × p), one array a direction. */
+function weightedDirections(
+  basis: ClusterBasis,
+  directions: readonly Float64Array[],
+): Float64Array[] {
+  return directions.map((h) => {
+    const along = turnDirection(basis, h);
+    for (let at = 0; at < along.length; at++) along[at]! *= basis.cr2[at]!;
+    return along;
+  });
+}
+
 /** P_i and u_is for the directions h_1 … h_m. */
 function partsOf(basis: ClusterBasis, directions: readonly Float64Array[]): Parts {
   const { p } = basis.fit;
@@ -30,16 +39,13 @@ function partsOf(basis: ClusterBasis, directions: readonly Float64Array[]): Part
   const omega = new Float64Array(m * m);
   const own = new Float64Array(basis.count * m * m);
   const u = new Float64Array(basis.count * m * p);
-  const turned = directions.map(() => new Float64Array(p));
+  const weighted = weightedDirections(basis, directions);
   for (let i = 0; i < basis.count; i++) {
-    directions.forEach((h, s) => {
-      const along = turned[s]!;
-      turn(basis, i, h, along);
-      for (let k = 0; k < p; k++) along[k]! *= cr2Factor(basis.lambda[i * p + k]!);
+    weighted.forEach((along, s) => {
       for (let a = 0; a < p; a++) {
         let sum = 0;
         for (let k = 0; k < p; k++) {
-          sum += basis.vectors[(i * p + a) * p + k]! * basis.lambda[i * p + k]! * along[k]!;
+          sum += basis.vectors[(i * p + a) * p + k]! * basis.lambda[i * p + k]! * along[i * p + k]!;
         }
         u[(i * m + s) * p + a] = sum;
       }
@@ -48,8 +54,9 @@ function partsOf(basis: ClusterBasis, directions: readonly Float64Array[]): Part
       for (let t = 0; t < m; t++) {
         let sum = 0;
         for (let k = 0; k < p; k++) {
-          const lambda = basis.lambda[i * p + k]!;
-          sum += lambda * (1 - lambda) * turned[s]![k]! * turned[t]![k]!;
+          const at = i * p + k;
+          const lambda = basis.lambda[at]!;
+          sum += lambda * (1 - lambda) * weighted[s]![at]! * weighted[t]![at]!;
         }
         own[(i * m + s) * m + t] = sum;
         omega[s * m + t]! += sum;
@@ -81,7 +88,7 @@ function pairTerm(u: Float64Array, i: number, j: number, m: number, p: number): 
 /** T of the HTZ test; pairs with an extreme subject are added one by one, the rest by ‖W‖² and tr(W²). */
 function spread(basis: ClusterBasis, parts: Parts, m: number): number {
   const { p } = basis.fit;
-  const extreme = extremeSubjects(basis);
+  const { extreme } = basis;
   const isExtreme = new Set(extreme);
   const w = new Float64Array(m * m * p * p);
   let total = 0;
@@ -127,15 +134,12 @@ function covariance(basis: ClusterBasis, directions: readonly Float64Array[]): F
   const { p } = basis.fit;
   const m = directions.length;
   const v = new Float64Array(m * m);
-  const along = new Float64Array(p);
+  const weighted = weightedDirections(basis, directions);
   const scores = new Float64Array(m);
   for (let i = 0; i < basis.count; i++) {
-    directions.forEach((h, s) => {
-      turn(basis, i, h, along);
+    weighted.forEach((along, s) => {
       let sum = 0;
-      for (let k = 0; k < p; k++) {
-        sum += along[k]! * cr2Factor(basis.lambda[i * p + k]!) * basis.turned[i * p + k]!;
-      }
+      for (let at = i * p; at < (i + 1) * p; at++) sum += along[at]! * basis.turned[at]!;
       scores[s] = sum;
     });
     for (let s = 0; s < m; s++) {

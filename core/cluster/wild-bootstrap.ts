@@ -1,4 +1,4 @@
-import type { ClusterBasis } from './cluster-basis.ts';
+import { type ClusterBasis, turnDirection } from './cluster-basis.ts';
 import { clusterErrors } from './sandwich.ts';
 import { drawWild, type WildDraws, wildP } from './wild-draws.ts';
 import { type WildWeights, webbSource, weightSource } from './wild-weights.ts';
@@ -74,7 +74,7 @@ export function wildBootstrap(
   draws: number,
   seed: number,
 ): WildBootstrap | null {
-  const se = clusterErrors(basis, h).cr1;
+  const se = clusterErrors(basis, turnDirection(basis, h)).cr1;
   if (!basis.fit.hasVariance || !(se > 0)) return null;
   const source = weightSource(basis.count, draws, seed);
   const drawn = drawWild(basis, h, source);

@@ -109,10 +109,8 @@ export function drawWild(basis: ClusterBasis, h: Float64Array, source: WeightSou
   for (let draw = 0; draw < count; draw++) {
     source.fill(draw, w);
     weightedSums(table, width, w, sums);
-    let ee = 0;
-    let ex = 0;
-    let xx = 0;
-    for (let i = 0; i < w.length; i++) {
+    let [ee, ex, xx] = source.signs ? scale : [0, 0, 0];
+    for (let i = 0; i < w.length && !source.signs; i++) {
       const square = w[i]! * w[i]!;
       const se = table[i * width]!;
       const sx = table[i * width + 1]!;

@@ -26,6 +26,8 @@ export interface WeightSource {
   readonly kind: WildWeights;
   /** Vectors that are computed; with enumeration half of 2^G, as w and −w agree. */
   readonly count: number;
+  /** Whether every squared weight is 1. */
+  readonly signs: boolean;
   readonly fill: (draw: number, into: Float64Array) => void;
 }
 
@@ -33,6 +35,7 @@ export interface WeightSource {
 function enumerated(subjects: number): WeightSource {
   return {
     kind: 'rademacher_enumerated',
+    signs: true,
     count: 2 ** (subjects - 1),
     fill: (draw, into) => {
       into[0] = 1;
@@ -45,6 +48,7 @@ function signs(seed: number, draws: number): WeightSource {
   const stream = new RandomStream(seed, 'wild bootstrap signs');
   return {
     kind: 'rademacher',
+    signs: true,
     count: draws,
     fill: (draw, into) => {
       stream.start(draw);
@@ -63,6 +67,7 @@ export function webbSource(seed: number, draws: number): WeightSource {
   const stream = new RandomStream(seed, 'wild bootstrap webb');
   return {
     kind: 'webb',
+    signs: false,
     count: draws,
     fill: (draw, into) => {
       stream.start(draw);

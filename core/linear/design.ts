@@ -1,5 +1,6 @@
 import { StatsError } from '../errors.ts';
 import type { GroupedTable } from '../table/long-table.ts';
+import { dot, meanOf, shiftAndScale } from './kernels.ts';
 import { multiply } from './small-matrix.ts';
 
 /**
@@ -21,23 +22,11 @@ export interface Scaled {
 
 /** Centres and scales a covariate. A constant one keeps scale 1, to be refused as collinear. */
 export function standardise(x: Float64Array): Scaled {
-  const n = x.length;
-  const origin = x[0] ?? 0;
-  let centre = 0;
-  for (let k = 0; k < n; k++) centre += (x[k]! - origin) / n;
-  centre += origin;
-  const z = new Float64Array(n);
-  let largest = 0;
-  for (let k = 0; k < n; k++) {
-    z[k] = x[k]! - centre;
-    largest = Math.max(largest, Math.abs(z[k]!));
-  }
-  const unit = largest > 0 ? largest : 1;
-  let sum = 0;
-  for (let k = 0; k < n; k++) sum += (z[k]! / unit) ** 2;
-  const scale = largest > 0 ? unit * Math.sqrt(sum / n) : 1;
-  for (let k = 0; k < n; k++) z[k]! /= scale;
-  return { z, centre, scale };
+  const centre = meanOf(x);
+  const moved = shiftAndScale(x, centre, 1);
+  const scale = Math.sqrt(dot(moved, moved) / x.length);
+  if (!(scale > 0)) return { z: moved, centre, scale: 1 };
+  return { z: shiftAndScale(moved, 0, 1 / scale), centre, scale };
 }
 
 function identity(p: number): Float64Array {

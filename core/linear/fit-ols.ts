@@ -1,5 +1,6 @@
 import { StatsError } from '../errors.ts';
 import { type Design, userR } from './design.ts';
+import { dot, meanOf, shiftAndScale } from './kernels.ts';
 import { solveUpper, solveUpperTransposed } from './small-matrix.ts';
 import { project, thinQr } from './thin-qr.ts';
 
@@ -28,13 +29,6 @@ export interface OlsFit {
   readonly hasVariance: boolean;
 }
 
-function meanOf(y: Float64Array): number {
-  const origin = y[0]!;
-  let sum = 0;
-  for (let k = 0; k < y.length; k++) sum += y[k]! - origin;
-  return origin + sum / y.length;
-}
-
 /**
  * Fits y (N) on a design by QR, never by normal equations on raw X.
  *
@@ -49,19 +43,13 @@ export function fitOls(design: Design, response: Float64Array): OlsFit {
   const { q, r: rCentred } = thinQr(design.columns, design.names);
   const r = userR(rCentred, design);
   const mean = meanOf(response);
-  const centred = new Float64Array(n);
-  let sumOfSquares = 0;
-  let tss = 0;
-  for (let k = 0; k < n; k++) {
-    centred[k] = response[k]! - mean;
-    sumOfSquares += response[k]! * response[k]!;
-    tss += centred[k]! * centred[k]!;
-  }
+  const centred = shiftAndScale(response, mean, 1);
+  const sumOfSquares = dot(response, response);
+  const tss = dot(centred, centred);
   const { along, residuals } = project(q, centred);
   const beta = solveUpper(r, along, p);
   beta[0]! += mean;
-  let rss = 0;
-  for (let k = 0; k < n; k++) rss += residuals[k]! * residuals[k]!;
+  let rss = dot(residuals, residuals);
   const hasVariance = rss > NO_VARIANCE * sumOfSquares;
   if (!hasVariance) {
     residuals.fill(0);

@@ -1,4 +1,5 @@
 import { StatsError } from '../errors.ts';
+import { addMultiple, dot, shiftAndScale } from './kernels.ts';
 
 /** Below this share of its length a column counts as determined by the earlier ones. */
 const COLLINEAR = 1e-10;
@@ -9,16 +10,10 @@ export interface ThinQr {
   readonly r: Float64Array;
 }
 
-function dot(a: Float64Array, b: Float64Array): number {
-  let sum = 0;
-  for (let k = 0; k < a.length; k++) sum += a[k]! * b[k]!;
-  return sum;
-}
-
 /** Takes the part of `v` along `unit` away and returns its coefficient. */
 function takeAway(v: Float64Array, unit: Float64Array): number {
   const along = dot(unit, v);
-  for (let k = 0; k < v.length; k++) v[k]! -= along * unit[k]!;
+  addMultiple(v, -along, unit);
   return along;
 }
 
@@ -35,7 +30,7 @@ export function thinQr(columns: readonly Float64Array[], names: readonly string[
   const q: Float64Array[] = [];
   const r = new Float64Array(p * p);
   columns.forEach((column, j) => {
-    const v = Float64Array.from(column);
+    const v = column.slice();
     const length = Math.sqrt(dot(v, v));
     for (let pass = 0; pass < 2; pass++) {
       q.forEach((unit, i) => {
@@ -45,8 +40,7 @@ export function thinQr(columns: readonly Float64Array[], names: readonly string[
     const left = Math.sqrt(dot(v, v));
     if (!(left > COLLINEAR * length)) throw new StatsError('collinear', { column: names[j]! });
     r[j * p + j] = left;
-    for (let k = 0; k < v.length; k++) v[k]! /= left;
-    q.push(v);
+    q.push(shiftAndScale(v, 0, 1 / left));
   });
   return { q, r };
 }
@@ -61,7 +55,7 @@ export interface Projection {
 
 /** Projects `response` (N) on Q, twice, so that the residuals are orthogonal to Q to working precision. */
 export function project(q: readonly Float64Array[], response: Float64Array): Projection {
-  const residuals = Float64Array.from(response);
+  const residuals = response.slice();
   const along = new Float64Array(q.length);
   for (let pass = 0; pass < 2; pass++) {
     q.forEach((unit, i) => {

@@ -1,3 +1,6 @@
+const TWO_POWER_32 = 4294967296;
+const TWO_POWER_MINUS_32 = 1 / TWO_POWER_32;
+
 /**
  * Random numbers without state outside: Doty-Humphrey's small fast counter generator (sfc32), started afresh for
  * each draw from (seed, procedure name, draw index). Asking for fewer draws, or spreading them over threads,
@@ -43,22 +46,45 @@ export class RandomStream {
     return value >>> 0;
   }
 
-  /** A whole number uniform on 0 … n − 1, n ≤ 2^32, without bias (rejection). */
+  /** A whole number uniform on 0 … n − 1, 1 ≤ n ≤ 2^21, without bias (Lemire 2019, exact in doubles). */
   below(n: number): number {
-    const limit = 4294967296 - (4294967296 % n);
-    let value = this.next();
-    while (value >= limit) value = this.next();
-    return value % n;
+    for (;;) {
+      const product = this.next() * n;
+      const whole = Math.floor(product * TWO_POWER_MINUS_32);
+      const rest = product - whole * TWO_POWER_32;
+      if (rest >= n || rest >= TWO_POWER_32 % n) return whole;
+    }
   }
 
-  /** Puts the first `count` entries from `from` on into random order (Fisher and Yates). */
-  shuffle(values: Float64Array | Int32Array, from: number, count: number): void {
+  /**
+   * Puts the first `count` entries from `from` on into random order (Fisher and Yates). Up to 2^21 entries.
+   *
+   * The generator runs in local variables here: the permutation tests spend most of their time in this loop.
+   */
+  shuffle(values: Float64Array, from: number, count: number): void {
+    let { a, b, c, counter } = this;
     for (let k = count - 1; k > 0; k--) {
-      const other = from + this.below(k + 1);
+      const n = k + 1;
+      let whole = 0;
+      for (;;) {
+        const value = (a + b + counter) | 0;
+        counter = (counter + 1) | 0;
+        a = b ^ (b >>> 9);
+        b = (c + (c << 3)) | 0;
+        c = (((c << 21) | (c >>> 11)) + value) | 0;
+        const product = (value >>> 0) * n;
+        whole = Math.floor(product * TWO_POWER_MINUS_32);
+        const rest = product - whole * TWO_POWER_32;
+        if (rest >= n || rest >= TWO_POWER_32 % n) break;
+      }
       const kept = values[from + k]!;
-      values[from + k] = values[other]!;
-      values[other] = kept;
+      values[from + k] = values[from + whole]!;
+      values[from + whole] = kept;
     }
+    this.a = a;
+    this.b = b;
+    this.c = c;
+    this.counter = counter;
   }
 }
 
