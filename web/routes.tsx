@@ -4,14 +4,16 @@ import { RouteFailed } from './app/layout/route-failed.tsx';
 import { routes as account } from './features/account/routes.tsx';
 import { routes as accounts } from './features/accounts/routes.tsx';
 import { routes as home, studyRoutes as studyHome } from './features/home/routes.tsx';
+import { routes as importing } from './features/import/routes.tsx';
 import { routes as members } from './features/members/routes.tsx';
 import { routes as security } from './features/security/routes.tsx';
 import { routes as setup } from './features/setup/routes.tsx';
 import { routes as signIn } from './features/sign-in/routes.tsx';
+import { routes as subjects } from './features/subjects/routes.tsx';
 import { routes as help } from './help/routes.tsx';
 
 /** Pages under /studies/:study; paths are relative to it. */
-const inStudy: RouteObject[] = [...studyHome, ...members, ...setup];
+const inStudy: RouteObject[] = [...studyHome, ...members, ...setup, ...subjects, ...importing];
 
 /** Pages outside a study. */
 const outside: RouteObject[] = [...home, ...account, ...accounts, ...security, ...help];

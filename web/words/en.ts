@@ -20,11 +20,13 @@ import {
 } from './common.ts';
 import { helpWords } from './help.ts';
 import { homeWords } from './home.ts';
+import { importProblems, importWords } from './imports.ts';
 import { membersProblems, membersWords } from './members.ts';
 import type { ProblemSentences } from './problems.ts';
 import { securityProblems, securityWords } from './security.ts';
 import { setupProblems, setupWords } from './setup.ts';
 import { signInProblems, signInWords } from './sign-in.ts';
+import { subjectsProblems, subjectsWords } from './subjects.ts';
 
 export const words = {
   common: commonWords,
@@ -44,6 +46,8 @@ export const words = {
   account: accountWords,
   members: membersWords,
   setup: setupWords,
+  subjects: subjectsWords,
+  imports: importWords,
   accounts: accountsWords,
   security: securityWords,
 } as const;
@@ -55,6 +59,8 @@ export const problems: ProblemSentences = {
   ...accountProblems,
   ...membersProblems,
   ...setupProblems,
+  ...subjectsProblems,
+  ...importProblems,
   ...accountsProblems,
   ...securityProblems,
 };

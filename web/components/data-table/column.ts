@@ -6,6 +6,8 @@ import type { Choice } from '../select.tsx';
 export type Column<Row> = {
   id: string;
   heading: string;
+  /** Stands under the heading: the axis of a picture in the cells. */
+  headingExtra?: ReactNode;
   /** Stands after the heading, and in the heading of the exported file. */
   unit?: string;
   /** What is shown; by default the value as text. */

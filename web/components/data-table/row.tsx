@@ -44,6 +44,7 @@ export function HeadingCell<Row>(props: {
       ) : (
         text
       )}
+      {column.headingExtra}
     </th>
   );
 }

@@ -1,0 +1,65 @@
+/** Subjects, their visits and readings. */
+import type { ProblemSentences } from './problems.ts';
+
+export const subjectsWords = {
+  heading: 'Subjects',
+  sentence:
+    'Each cord is one subject’s follow-up, with a knot at every visit. Open a code to read the visits.',
+  caption: 'Subjects you may see',
+  noun: ['subject', 'subjects'],
+  code: 'Subject',
+  site: 'Site',
+  state: 'State',
+  stateDate: 'State since',
+  baseline: 'Baseline',
+  doneOfDue: 'Done / due',
+  lastVisit: 'Last visit',
+  followUp: 'Follow-up',
+  text: 'Code holds',
+  empty: 'No subject is enrolled at your sites yet.',
+  emptyImport: 'Import readings',
+  emptyImportHint: 'An import can enrol subjects as it goes.',
+  visits: 'Visits and readings',
+  visitsSentence: (count: number) =>
+    count === 0 ? 'Nothing is planned or logged.' : 'In order of time, those still to come too.',
+  visitsCaption: 'Visits of this subject with their readings',
+  visitNoun: ['visit', 'visits'],
+  visit: 'Visit',
+  date: 'Date',
+  window: 'Window',
+  contact: 'Contact',
+  origin: 'Logged',
+  outOfWindow: 'out of window',
+  afterEnd: 'no longer due',
+  partial: 'partial date',
+  unscheduledBecause: (reason: string) => `Unscheduled: ${reason}`,
+  missedBecause: (reason: string, text: string | null) =>
+    text ? `Missed: ${reason}, ${text}` : `Missed: ${reason}`,
+  fromImport: (file: string) => `import of ${file}`,
+  typed: 'typed in',
+  by: (name: string) => `by ${name}`,
+  once: 'Read once',
+  onceCaption: 'Readings taken once per subject',
+  measure: 'Measure',
+  value: 'Value',
+  factsHeading: 'Consent and state',
+  consent: 'Consent',
+  consentValue: (version: string, date: string) => `version ${version}, ${date}`,
+  enrolled: 'Enrolled',
+  stateReason: 'Reason',
+  zone: 'Time zone of the site',
+  notDone: (category: string) => `not done: ${category}`,
+  implausible: 'outside the plausible range',
+  explanation: (text: string) => `kept because: ${text}`,
+  replicate: (number: number) => `reading ${number}`,
+  corrected: 'corrected',
+  correction: (old: string, next: string, reason: string, by: string) =>
+    `${old} became ${next}: ${reason}, by ${by}`,
+  showCorrections: (count: number) => (count === 1 ? '1 correction' : `${count} corrections`),
+  sentenceOf: (site: string, done: number, due: number) =>
+    `${site}. ${done} of ${due} visits due so far are done.`,
+  back: 'All subjects',
+  noDay: 'date not known',
+} as const;
+
+export const subjectsProblems: ProblemSentences = {};
