@@ -169,6 +169,12 @@ export const subjectProblems = defineProblems({
     title: 'Set-up file not usable',
     detail: 'The set-up file can’t be used as it stands. Nothing was made.',
   },
+  first_owner_same: {
+    status: 422,
+    title: 'Two persons needed',
+    detail:
+      'The administrator and the owner have the same address. An administrator never sees study data: give two accounts.',
+  },
   allocation_not_here: {
     status: 403,
     title: 'Not open here',
