@@ -1,5 +1,6 @@
 import { migrate } from '../database/migrate.ts';
 import type { RoleSettings } from '../database/role-names.ts';
+import { createQueues } from './jobs/queues.ts';
 
 /**
  * Brings a database to the present schema, its roles and its queues.
@@ -7,5 +8,7 @@ import type { RoleSettings } from '../database/role-names.ts';
  * @returns the names of the migrations that were run
  */
 export async function prepareDatabase(ownerUrl: string, roles: RoleSettings): Promise<string[]> {
-  return await migrate(ownerUrl, roles);
+  const run = await migrate(ownerUrl, roles);
+  await createQueues(ownerUrl, roles);
+  return run;
 }

@@ -5,6 +5,7 @@ import { routes as cutRoutes } from './cuts/routes.ts';
 import { docsRoutes } from './docs/routes.ts';
 import { routes as healthRoutes } from './health/routes.ts';
 import { routes as importRoutes } from './imports/routes.ts';
+import { routes as jobRoutes } from './jobs/routes.ts';
 import { routes as recordRoutes } from './records/routes.ts';
 import { routes as sessionRoutes } from './session/routes.ts';
 import { routes as setupRoutes } from './setup/routes.ts';
@@ -16,6 +17,7 @@ export const featureRoutes: readonly RouteDefinition[] = [
   ...sessionRoutes,
   ...studyRoutes,
   ...setupRoutes,
+  ...jobRoutes,
   ...importRoutes,
   ...cutRoutes,
   ...analysisRoutes,

@@ -1,5 +1,6 @@
 /** Long work as jobs: what a feature defines, and how one is started. The queue itself is in queue.ts. */
 import type { EntityManager } from 'typeorm';
+import type { JobChanges } from './changes.ts';
 
 /** What the work gets: its own id and the record it is about; everything else it reads itself. */
 export interface JobRun {
@@ -13,19 +14,14 @@ export interface JobRun {
   cancelled(): Promise<boolean>;
 }
 
+/** A handler may run again where its machine was lost, so it has to find out what it did already. */
 export interface JobDefinition {
   kind: string;
-  /** How often a run that threw is started again; 0 for work that may not be repeated by itself. */
-  retries: number;
   handler: (run: JobRun) => Promise<void>;
 }
 
-export function defineJob(
-  kind: string,
-  handler: JobDefinition['handler'],
-  options: { retries?: number } = {},
-): JobDefinition {
-  return { kind, handler, retries: options.retries ?? 2 };
+export function defineJob(kind: string, handler: JobDefinition['handler']): JobDefinition {
+  return { kind, handler };
 }
 
 /** Ids only: nothing of a subject, a reading or an arm goes into the queue. */
@@ -42,4 +38,6 @@ export interface Jobs {
    * @returns the uid under which its progress is followed
    */
   start(manager: EntityManager, order: JobOrder): Promise<string>;
+  /** Tells when a job has changed. */
+  readonly changes: Pick<JobChanges, 'watch'>;
 }
