@@ -12,6 +12,9 @@ export interface ClusterErrors {
   readonly cr3: number | null;
 }
 
+/** Below this share of the ordinary error an error is rounding, and is 0. */
+const ROUNDING = 1e-13;
+
 /**
  * Standard errors of a contrast by CR0 to CR3; `along` is its `turnDirection` (G × p).
  *
@@ -40,11 +43,16 @@ export function clusterErrors(basis: ClusterBasis, along: Float64Array): Cluster
     cr3 += sum3 * sum3;
   }
   const g = basis.count;
+  // E_1'h is as long as h, so this is the ordinary variance σ²h'h.
+  let ordinary = 0;
+  for (let k = 0; k < p; k++) ordinary += basis.fit.sigmaSquared * along[k]! * along[k]!;
+  const root = (variance: number) =>
+    variance > ROUNDING * ROUNDING * ordinary ? Math.sqrt(variance) : 0;
   return {
-    cr0: Math.sqrt(cr0),
-    cr1: Math.sqrt((cr0 * g) / (g - 1)),
-    cr1s: Math.sqrt((cr0 * g * (n - 1)) / ((g - 1) * (n - p))),
-    cr2: Math.sqrt(cr2),
-    cr3: basis.fixing.length > 0 ? null : Math.sqrt(cr3),
+    cr0: root(cr0),
+    cr1: root((cr0 * g) / (g - 1)),
+    cr1s: root((cr0 * g * (n - 1)) / ((g - 1) * (n - p))),
+    cr2: root(cr2),
+    cr3: basis.fixing.length > 0 ? null : root(cr3),
   };
 }
