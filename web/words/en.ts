@@ -4,6 +4,9 @@
  */
 import { accountProblems, accountWords } from './account.ts';
 import { accountsProblems, accountsWords } from './accounts.ts';
+import { analysisProblems, analysisWords } from './analysis.ts';
+import { chartsWords } from './charts.ts';
+import { checkWords } from './check.ts';
 import {
   chairWord,
   commonProblems,
@@ -18,11 +21,14 @@ import {
   tableWords,
   topBarWords,
 } from './common.ts';
+import { cutsProblems, cutsWords } from './cuts.ts';
+import { fitWords } from './fit.ts';
 import { helpWords } from './help.ts';
 import { homeWords } from './home.ts';
 import { importProblems, importWords } from './imports.ts';
 import { membersProblems, membersWords } from './members.ts';
 import type { ProblemSentences } from './problems.ts';
+import { recordsProblems, recordsWords } from './records.ts';
 import { securityProblems, securityWords } from './security.ts';
 import { setupProblems, setupWords } from './setup.ts';
 import { signInProblems, signInWords } from './sign-in.ts';
@@ -50,6 +56,12 @@ export const words = {
   imports: importWords,
   accounts: accountsWords,
   security: securityWords,
+  charts: chartsWords,
+  analysis: analysisWords,
+  cuts: cutsWords,
+  check: checkWords,
+  fit: fitWords,
+  records: recordsWords,
 } as const;
 
 /** Sentences by the code of a problem document. */
@@ -63,4 +75,7 @@ export const problems: ProblemSentences = {
   ...importProblems,
   ...accountsProblems,
   ...securityProblems,
+  ...analysisProblems,
+  ...cutsProblems,
+  ...recordsProblems,
 };
