@@ -1,7 +1,6 @@
 /** Subjects with their cords, visits and readings: the list, one subject, and finding one by code. */
 import { z } from 'zod';
 import { daySchema, directionSchema, momentSchema, pageQuerySchema, uidSchema } from './common.ts';
-import { messageSchema } from './imports.ts';
 import { measureNatures } from './setup.ts';
 
 export const subjectStates = [
@@ -194,8 +193,6 @@ export const subjectDetailSchema = z.object({
   once: z.array(readingViewSchema),
   /** In the order of the set-up. */
   measures: z.array(subjectMeasureSchema),
-  /** A reminder for the reader, such as that consent was withdrawn; words from the catalogue. */
-  notices: z.array(messageSchema),
 });
 export type SubjectDetail = z.infer<typeof subjectDetailSchema>;
 
