@@ -64,6 +64,7 @@ export const platformWords = {
   account: (role: string, email: string, password: string) =>
     `  ${role.padEnd(22)}  ${email.padEnd(34)}  ${password}`,
   letters: (address: string) => `Letters of the demo: ${address}`,
+  working: 'Working. Ctrl-C stops it when the present job is done.',
   stopHint: 'Ctrl-C stops it.',
   stopping: 'Stopping…',
   stopped: 'Stopped. The data are kept.',
@@ -72,7 +73,7 @@ export const platformWords = {
   addressUnusable: (host: string, reason: string) => `HOST ${host} can't be listened on: ${reason}`,
   databaseGone: 'PostgreSQL ended by itself. Start again; the data are kept.',
   databaseUnreachable: (reason: string) =>
-    `The database of DATABASE_URL can't be reached: ${reason}`,
+    `The database can't be reached: ${reason}. Check DATABASE_URL; without one, npm start makes the database.`,
   databaseNeeded: 'Set DATABASE_URL, or use npm start, which brings its own database.',
   secretUnreadable: (place: string) =>
     `${place} does not hold a secret of 64 hexadecimal digits. Restore it from a backup; without it the database can't be opened.`,

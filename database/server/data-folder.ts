@@ -74,7 +74,9 @@ export function chooseBaseFolder(root: string, env: NodeJS.ProcessEnv): string {
   throw new ClusterProblem('no-data-folder', { tried: refused.join(', ') });
 }
 
-function candidateBases(root: string): string[] {
+function candidateBases(repository: string): string[] {
+  // Spelled one way, since the name of the folder elsewhere follows from it.
+  const root = resolve(repository);
   // The repository's own folder first; elsewhere the name carries the repository, so that two clones stay apart.
   const name = `tetherline-${createHash('sha256').update(root).digest('hex').slice(0, 12)}`;
   const state =

@@ -1,0 +1,26 @@
+import { existsSync } from 'node:fs';
+import { join, resolve } from 'node:path';
+import { platformWords } from '../words/platform.ts';
+import { runOrExplain } from './failure.ts';
+import { openInstallation } from './installation.ts';
+import { openLog } from './open-log.ts';
+import { runServer } from './run-server.ts';
+import { stopOnSignal } from './stop-on-signal.ts';
+
+/** `npm run serve`: one more server over a database that is already migrated, for several processes or machines. */
+await runOrExplain(async () => {
+  if (!process.env.DATABASE_URL) {
+    console.error(platformWords.databaseNeeded);
+    process.exit(2);
+  }
+  const root = resolve(import.meta.dirname, '../..');
+  const installation = await openInstallation(root, process.env);
+  const built = join(root, 'dist/web');
+  const webRoot = existsSync(join(built, 'index.html')) ? built : undefined;
+  const server = await runServer(installation, {
+    webRoot,
+    logger: openLog(installation.config),
+  });
+  stopOnSignal(server.stop);
+  console.log(platformWords.ready(server.address, process.uptime().toFixed(1)));
+});
