@@ -10,6 +10,7 @@ import { routes as recordRoutes } from './records/routes.ts';
 import { routes as sessionRoutes } from './session/routes.ts';
 import { routes as setupRoutes } from './setup/routes.ts';
 import { routes as studyRoutes } from './studies/routes.ts';
+import { routes as subjectRoutes } from './subjects/routes.ts';
 
 export const featureRoutes: readonly RouteDefinition[] = [
   ...healthRoutes,
@@ -17,6 +18,7 @@ export const featureRoutes: readonly RouteDefinition[] = [
   ...sessionRoutes,
   ...studyRoutes,
   ...setupRoutes,
+  ...subjectRoutes,
   ...jobRoutes,
   ...importRoutes,
   ...cutRoutes,
