@@ -49,6 +49,7 @@ export const cutMeasureSchema = z.object({
   per: z.enum(['visit', 'subject']),
   decimals: z.number().int(),
 });
+export type CutMeasure = z.infer<typeof cutMeasureSchema>;
 
 export const cutSummarySchema = z.object({
   id: z.string(),
@@ -117,3 +118,4 @@ export const cutChoicesSchema = z.object({
   masked: z.boolean(),
   lateDays: z.number().int(),
 });
+export type CutChoices = z.infer<typeof cutChoicesSchema>;

@@ -10,11 +10,13 @@ type PageProps = {
   sentence?: ReactNode;
   /** At the right of the heading: the stamp, quiet acts. */
   aside?: ReactNode;
+  /** The heading speaks of dependence that matters: a bar in its colour stands before it. */
+  warn?: boolean;
   children?: ReactNode;
 };
 
 /** A page is a document: its heading, one sentence, then the table or picture at full width. */
-export function Page({ heading, title, sentence, aside, children }: PageProps) {
+export function Page({ heading, title, sentence, aside, warn, children }: PageProps) {
   const headingRef = useRef<HTMLHeadingElement>(null);
   const named = title ?? (typeof heading === 'string' ? heading : words.common.product);
 
@@ -30,7 +32,7 @@ export function Page({ heading, title, sentence, aside, children }: PageProps) {
   return (
     <article>
       <header className="mb-6 flex flex-wrap items-start justify-between gap-x-6 gap-y-2">
-        <div className="min-w-0">
+        <div className={warn ? 'min-w-0 border-l-[6px] border-flare pl-5' : 'min-w-0'}>
           <h1
             ref={headingRef}
             tabIndex={-1}

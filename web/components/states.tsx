@@ -56,7 +56,7 @@ export function Failed({ error, again }: { error: unknown; again?: () => void })
 }
 
 /** Which roles may, and whom to ask. */
-function Forbidden({ sentence }: { sentence: string }) {
+export function Forbidden({ sentence }: { sentence: string }) {
   return (
     <div className="border-l-4 border-edge py-1 pl-3">
       <h2 className="text-17 font-semibold">{words.states.forbiddenHeading}</h2>
