@@ -26,7 +26,13 @@ export function ensurePackages(root) {
     .update(readFileSync(join(root, 'package-lock.json')))
     .update(`${process.version} ${process.platform} ${process.arch}`)
     .digest('hex');
-  if (existsSync(stamp) && readFileSync(stamp, 'utf8') === wanted) return;
+  const stamped = existsSync(stamp) ? readFileSync(stamp, 'utf8') : undefined;
+  if (stamped === wanted) return;
+  // Somebody may have installed by hand: what is whole already is not torn down and fetched again.
+  if (stamped === undefined && holdsLock(root)) {
+    writeFileSync(stamp, wanted);
+    return;
+  }
   console.error(words.installing);
   rmSync(stamp, { force: true });
   const result = spawnSync('npm', ['ci', '--include=dev', '--no-audit', '--no-fund'], {
@@ -39,4 +45,24 @@ export function ensurePackages(root) {
     process.exit(2);
   }
   writeFileSync(stamp, wanted);
+}
+
+/**
+ * Whether npm's own record of the installed packages names all of the lock file, in the same versions.
+ * @param {string} root
+ */
+function holdsLock(root) {
+  const record = join(root, 'node_modules/.package-lock.json');
+  if (!existsSync(record)) return false;
+  const wanted = readJson(join(root, 'package-lock.json')).packages;
+  const installed = readJson(record).packages;
+  return Object.entries(wanted).every(
+    ([path, { version, optional }]) =>
+      path === '' || optional === true || installed[path]?.version === version,
+  );
+}
+
+/** @param {string} file */
+function readJson(file) {
+  return JSON.parse(readFileSync(file, 'utf8'));
 }
