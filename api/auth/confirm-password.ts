@@ -40,7 +40,7 @@ export async function confirmPassword(
     tx.audit({
       at: now,
       studyUid: null,
-      action: 'password.refused',
+      action: 'password refused',
       entity: 'account',
       entityUid: person.accountUid,
     });

@@ -193,7 +193,7 @@ export async function renewSession(
       tx.audit({
         at: now,
         studyUid: null,
-        action: 'session.token-reused',
+        action: 'refresh token reused',
         entity: 'account',
         entityUid: session.account?.uid ?? null,
         after: { session: session.uid, address: session.addressHash, requestId },

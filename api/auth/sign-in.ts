@@ -49,7 +49,7 @@ export async function signIn(deps: SignInDeps, knock: Knock): Promise<SignInResu
   const note = noteRefusal(deps, { account, emailPrint, addressPrint, requestId: knock.requestId });
   if (!verdict.allowed) {
     // One entry a window, so that a flood does not fill the trail.
-    if (verdict.justReached) await note('sign-in.throttled');
+    if (verdict.justReached) await note('sign-in throttled');
     throw new Problem(
       'sign_in_throttled',
       { minutes: Math.ceil(verdict.waitSeconds / 60) },
@@ -58,7 +58,7 @@ export async function signIn(deps: SignInDeps, knock: Knock): Promise<SignInResu
   }
   const right = await passwordMatches(account?.passwordHash, knock.password);
   if (!account || !right || account.disabledAt) {
-    await note('sign-in.refused');
+    await note('sign-in refused');
     throw new Problem('sign_in_refused');
   }
   await forgiveTry(db, limits, now);
@@ -85,7 +85,7 @@ export async function signIn(deps: SignInDeps, knock: Knock): Promise<SignInResu
     tx.audit({
       at: now,
       studyUid: null,
-      action: 'sign-in.accepted',
+      action: 'sign-in accepted',
       entity: 'account',
       entityUid: account.uid,
       after: { session: opened.session.uid, address: addressPrint },
@@ -108,7 +108,7 @@ interface Refused {
 
 /** An address nobody has is kept as a fingerprint only: people type passwords into that field. */
 function noteRefusal(deps: SignInDeps, refused: Refused) {
-  return (action: 'sign-in.refused' | 'sign-in.throttled'): Promise<void> => {
+  return (action: 'sign-in refused' | 'sign-in throttled'): Promise<void> => {
     const { account, emailPrint, addressPrint, requestId } = refused;
     return inTransaction(deps.databases.masked, null, async (tx) => {
       tx.audit({

@@ -58,19 +58,19 @@ export const accountActRequestSchema = z.object({
 export type AccountActRequest = z.infer<typeof accountActRequestSchema>;
 
 export const securityActions = [
-  'sign-in.accepted',
-  'sign-in.refused',
-  'sign-in.throttled',
-  'sign-out',
-  'session.revoked',
-  'session.token-reused',
-  'password.changed',
-  'password.refused',
-  'account.created',
-  'account.disabled',
-  'account.enabled',
-  'account.reset',
-  'account.preferences-changed',
+  'sign-in accepted',
+  'sign-in refused',
+  'sign-in throttled',
+  'signed out',
+  'session ended',
+  'refresh token reused',
+  'password changed',
+  'password refused',
+  'account created',
+  'account disabled',
+  'account enabled',
+  'account reset',
+  'preferences changed',
 ] as const;
 export const securityActionSchema = z.enum(securityActions);
 

@@ -4,7 +4,7 @@ import type { JobDefinition } from '../jobs/jobs.ts';
 import { importJobs } from './imports/work.ts';
 
 export function jobDefinitions(
-  deps: Pick<AppDeps, 'databases' | 'store' | 'clock'>,
+  deps: Pick<AppDeps, 'databases' | 'store' | 'clock' | 'importThreads'>,
 ): readonly JobDefinition[] {
   return importJobs(deps);
 }

@@ -65,7 +65,7 @@ export async function changeMe(
     tx.audit({
       at: deps.clock(),
       studyUid: null,
-      action: 'account.preferences-changed',
+      action: 'preferences changed',
       entity: 'account',
       entityUid: account.uid,
       before,
@@ -104,7 +104,7 @@ export async function changePassword(
     tx.audit({
       at: now,
       studyUid: null,
-      action: 'password.changed',
+      action: 'password changed',
       entity: 'account',
       entityUid: person.accountUid,
       after: { otherSessionsEnded: ended },
@@ -155,7 +155,7 @@ export async function endSession(
     tx.audit({
       at: now,
       studyUid: null,
-      action: own ? 'sign-out' : 'session.revoked',
+      action: own ? 'signed out' : 'session ended',
       entity: 'account',
       entityUid: person.accountUid,
       after: { session: sessionUid },
