@@ -5,6 +5,7 @@ import { createAnalysisThreads } from '../analysis-threads/threads.ts';
 import { type Clock, systemClock } from '../clock.ts';
 import { jobDefinitions } from '../features/job-definitions.ts';
 import type { AppDeps } from '../http/deps.ts';
+import { createImportThreads } from '../import-threads/threads.ts';
 import { openQueue } from '../jobs/queue.ts';
 import { hourlyUpkeep } from '../jobs/upkeep.ts';
 import { openMailer } from '../mail/mailer.ts';
@@ -56,6 +57,10 @@ export async function openServices(
       logger.error({ kind: error.name }, 'a computing thread failed'),
     );
     closers.push(threads.close);
+    const importThreads = createImportThreads(1, (error) =>
+      logger.error({ kind: error.name }, 'a parsing thread failed'),
+    );
+    closers.push(importThreads.close);
     const queue = await openQueue({ url: urls.masked, db: databases.masked, clock, logger });
     closers.push(queue.close);
     const { store } = storage;
@@ -69,6 +74,7 @@ export async function openServices(
       jobs: queue,
       logger,
       threads,
+      importThreads,
     };
     return {
       deps,

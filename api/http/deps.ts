@@ -4,6 +4,7 @@ import type { Databases } from '../../database/data-source.ts';
 import type { AnalysisThreads } from '../analysis-threads/threads.ts';
 import type { Clock } from '../clock.ts';
 import type { Config } from '../config.ts';
+import type { ImportThreads } from '../import-threads/threads.ts';
 import type { Jobs } from '../jobs/jobs.ts';
 import type { Mailer } from '../mail/mailer.ts';
 import type { Secrets } from '../secrets.ts';
@@ -20,6 +21,7 @@ export interface AppDeps {
   jobs: Jobs;
   logger: Logger;
   threads: AnalysisThreads;
+  importThreads: ImportThreads;
   /** Folder of the built pages; without one only the API is served. */
   webRoot?: string;
 }

@@ -36,6 +36,7 @@ export async function appFor(database: TestDatabase, study: StudyForTests): Prom
     secrets: deriveSecrets('a'.repeat(64), 'tests'),
     logger: pino({ level: 'silent' }),
     threads: study.threads,
+    importThreads: untouched('the parsing threads'),
   });
   const sessions = new Map<Person, string[]>();
   const cookiesOf = async (person: Person): Promise<string[]> => {

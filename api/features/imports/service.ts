@@ -8,8 +8,7 @@ import type { ImportMapping, ImportView } from '../../contracts/imports.ts';
 import type { AppDeps } from '../../http/deps.ts';
 import type { StudyMembership } from '../../http/membership.ts';
 import { Problem } from '../../http/problems.ts';
-import { FileProblem } from './parse/file-problem.ts';
-import { inspectInThread } from './parse/thread.ts';
+import { FileProblem } from '../../import-threads/file-problem.ts';
 import { type ImportRow, importOf, importView } from './rows.ts';
 import { suggestMapping } from './suggest-mapping.ts';
 import { sha256OfFile, type Upload } from './upload.ts';
@@ -19,7 +18,7 @@ export const APPLY_JOB = 'import-apply';
 
 export type ImportContext = {
   db: DataSource;
-  deps: Pick<AppDeps, 'store' | 'clock' | 'jobs'>;
+  deps: Pick<AppDeps, 'store' | 'clock' | 'jobs' | 'importThreads'>;
   actor: Actor;
   membership: StudyMembership;
 };
@@ -50,7 +49,7 @@ export async function uploadImport(context: ImportContext, upload: Upload): Prom
       {},
       { errors: [{ path: 'measure', message: 'Choose a measure.' }] },
     );
-  const inspection = await inspect(upload.path, await armNames(context));
+  const inspection = await inspect(context, upload.path);
   const hash = await sha256OfFile(upload.path);
   const key = `imports/${randomUUID()}`;
   await deps.store.put(key, createReadStream(upload.path), { size: upload.size, type: 'text/csv' });
@@ -91,9 +90,10 @@ async function armNames({ db, membership }: ImportContext): Promise<string[]> {
   return arms.map((arm) => arm.name);
 }
 
-async function inspect(path: string, secretNames: string[]) {
+async function inspect(context: ImportContext, path: string) {
+  const secretNames = await armNames(context);
   try {
-    return await inspectInThread(path, secretNames);
+    return await context.deps.importThreads.inspect({ path, secretNames });
   } catch (error) {
     if (error instanceof FileProblem) throw new Problem(error.code, error.params, { cause: error });
     throw error;

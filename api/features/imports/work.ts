@@ -11,18 +11,17 @@ import { inTransaction, type Tx } from '../../audit/transaction.ts';
 import type { ImportCounts } from '../../contracts/imports.ts';
 import type { AppDeps } from '../../http/deps.ts';
 import { membershipOf, type StudyMembership } from '../../http/membership.ts';
+import { FileProblem } from '../../import-threads/file-problem.ts';
+import type { Delimiter } from '../../import-threads/rows-of.ts';
 import { defineJob, type JobDefinition, type JobRun } from '../../jobs/jobs.ts';
 import { applyRows } from './apply-rows.ts';
 import { judgeRows } from './judge/judge.ts';
 import type { Judging, Query } from './judge/judging.ts';
 import { copyIntoStaging, createStaging } from './judge/staging.ts';
-import { FileProblem } from './parse/file-problem.ts';
-import type { Delimiter } from './parse/rows-of.ts';
-import { piecesInThread } from './parse/thread.ts';
 import { IMPORT_SELECT, type ImportRow } from './rows.ts';
 import { APPLY_JOB, CHECK_JOB } from './service.ts';
 
-type WorkDeps = Pick<AppDeps, 'databases' | 'store' | 'clock'>;
+type WorkDeps = Pick<AppDeps, 'databases' | 'store' | 'clock' | 'importThreads'>;
 
 /** Thrown inside a transaction to undo it; not a failure. */
 class Cancelled extends Error {}
@@ -177,7 +176,7 @@ async function stageAndJudge(
     const path = join(folder, 'file');
     await pipeline(await deps.store.get(row.object_key), createWriteStream(path));
     await createStaging(query);
-    const pieces = piecesInThread({
+    const pieces = deps.importThreads.pieces({
       path,
       delimiter: row.delimiter as Delimiter,
       mapping,

@@ -3,7 +3,7 @@ import { Readable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import type { PoolClient } from 'pg';
 import { from as copyFrom } from 'pg-copy-streams';
-import { STAGED_COLUMNS } from '../parse/copy-text.ts';
+import { STAGED_COLUMNS } from '../../../import-threads/copy-text.ts';
 import type { Query } from './judging.ts';
 
 export async function createStaging(query: Query): Promise<void> {

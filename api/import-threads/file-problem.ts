@@ -1,4 +1,4 @@
-import type { FileProblemCode } from '../../../words/imports.ts';
+import type { FileProblemCode } from '../words/imports.ts';
 
 /**
  * What is wrong with a whole file. Rows have reasons of their own; a file problem means that the rows

@@ -1,5 +1,5 @@
 /** One row of the file by the mapping: what it says, or why it can't be used. */
-import type { FixedOrColumn, ImportMapping } from '../../../contracts/imports.ts';
+import type { FixedOrColumn, ImportMapping } from '../contracts/imports.ts';
 import {
   CODE_FORM,
   type DateOrder,
