@@ -37,7 +37,14 @@ export function contentOf(record: RecordContent): JsonValue {
     purpose: record.purpose,
     result: JSON.parse(record.resultText),
     seed: record.seed,
-    specification: { ...record.specification },
+    specification: {
+      axis: record.specification.axis,
+      group: record.specification.group,
+      measure: record.specification.measure,
+      number: record.specification.number,
+      sha256: record.specification.sha256,
+      unit: record.specification.unit,
+    },
   };
 }
 
