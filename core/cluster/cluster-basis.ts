@@ -98,47 +98,66 @@ export function clusterBasis(fit: OlsFit, start: Int32Array): ClusterBasis {
   else sumsForAny(fit, start, s, c);
   const { values, vectors } = symmetricEigen(s, count, p);
   const cr2 = new Float64Array(count * p);
-  const extreme: number[] = [];
-  const fixing: number[] = [];
-  for (let i = 0; i < count; i++) {
-    let largest = 0;
-    for (let at = i * p; at < (i + 1) * p; at++) {
-      const value = values[at]!;
-      const fixes = value >= FIXES_A_DIRECTION;
-      values[at] = fixes ? 1 : Math.max(0, value);
-      cr2[at] = fixes ? 0 : 1 / Math.sqrt(1 - values[at]!);
-      largest = Math.max(largest, values[at]!);
-    }
-    if (largest > EXTREME_LEVERAGE) extreme.push(i);
-    if (largest === 1) fixing.push(i);
+  const extreme = new Set<number>();
+  const fixing = new Set<number>();
+  for (let at = 0; at < values.length; at++) {
+    const value = values[at]!;
+    if (value < 0) values[at] = 0;
+    if (value > EXTREME_LEVERAGE) extreme.add(Math.floor(at / p));
+    if (value >= FIXES_A_DIRECTION) {
+      values[at] = 1;
+      fixing.add(Math.floor(at / p));
+    } else cr2[at] = value > 0 ? 1 / Math.sqrt(1 - value) : 1;
   }
-  const turned = new Float64Array(count * p);
-  for (let i = 0; i < count; i++) turnInto(vectors, i, p, c, i * p, turned);
-  return { fit, count, start, s, c, lambda: values, vectors, turned, cr2, extreme, fixing };
+  return {
+    fit,
+    count,
+    start,
+    s,
+    c,
+    lambda: values,
+    vectors,
+    turned: turnAll(vectors, count, p, c, p),
+    cr2,
+    extreme: [...extreme],
+    fixing: [...fixing],
+  };
 }
 
-/** Writes E_i'x (p), x at x[from], to its place in a G × p array. */
-function turnInto(
+/** E_i'x_i of every subject (G × p); x_i (p) stands at x[i · stride]. */
+function turnAll(
   vectors: Float64Array,
-  i: number,
+  count: number,
   p: number,
   x: Float64Array,
-  from: number,
-  into: Float64Array,
-): void {
-  for (let k = 0; k < p; k++) {
-    let sum = 0;
-    for (let a = 0; a < p; a++) sum += vectors[(i * p + a) * p + k]! * x[from + a]!;
-    into[i * p + k] = sum;
+  stride: number,
+): Float64Array {
+  const turned = new Float64Array(count * p);
+  if (p === 2) {
+    // The two eigenvectors are one turn apart, so half of the reads do.
+    for (let i = 0; i < count; i++) {
+      const cosine = vectors[4 * i]!;
+      const sine = vectors[4 * i + 2]!;
+      const a = x[i * stride]!;
+      const b = x[i * stride + 1]!;
+      turned[2 * i] = cosine * a + sine * b;
+      turned[2 * i + 1] = cosine * b - sine * a;
+    }
+    return turned;
   }
+  for (let i = 0; i < count; i++) {
+    for (let k = 0; k < p; k++) {
+      let sum = 0;
+      for (let a = 0; a < p; a++) sum += vectors[(i * p + a) * p + k]! * x[i * stride + a]!;
+      turned[i * p + k] = sum;
+    }
+  }
+  return turned;
 }
 
 /** E_i'h of every subject (G × p), for the direction h (p) of a contrast. */
 export function turnDirection(basis: ClusterBasis, h: Float64Array): Float64Array {
-  const { p } = basis.fit;
-  const turned = new Float64Array(basis.count * p);
-  for (let i = 0; i < basis.count; i++) turnInto(basis.vectors, i, p, h, 0, turned);
-  return turned;
+  return turnAll(basis.vectors, basis.count, basis.fit.p, h, 0);
 }
 
 /**

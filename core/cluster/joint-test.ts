@@ -1,4 +1,5 @@
 import { fUpper } from '../distributions/f.ts';
+import { dot, shiftAndScale } from '../linear/kernels.ts';
 import { cholesky, solveCholesky } from '../linear/small-matrix.ts';
 import { symmetricEigen } from '../linear/symmetric-eigen.ts';
 import { type ClusterBasis, turnDirection } from './cluster-basis.ts';
@@ -169,17 +170,21 @@ function inverseRoot(omega: Float64Array, m: number): Float64Array | null {
  * The joint test HTZ of m contrasts being 0, by CR2 (Pustejovsky & Tipton 2018; Hotelling's T² approximation with
  * Zhang's degrees of freedom). m = 1 is the Satterthwaite t test squared.
  *
- * @param directions m directions h (p each, see `contrastDirection`)
- * @param estimates m values Cβ̂
+ * @param contrasts m directions h (p each, see `contrastDirection`)
+ * @param values m values Cβ̂
  * @returns null where the covariance is singular or fewer than one df is left
  */
 export function jointTest(
   basis: ClusterBasis,
-  directions: readonly Float64Array[],
-  estimates: ArrayLike<number>,
+  contrasts: readonly Float64Array[],
+  values: ArrayLike<number>,
 ): JointTest | null {
   const { p } = basis.fit;
-  const m = directions.length;
+  const m = contrasts.length;
+  // F does not change when a contrast is multiplied; unit lengths keep squares of squares in range.
+  const lengths = contrasts.map((h) => Math.sqrt(dot(h, h)));
+  const directions = contrasts.map((h, s) => shiftAndScale(h, 0, 1 / lengths[s]!));
+  const estimates = lengths.map((length, s) => values[s]! / length);
   const root = inverseRoot(partsOf(basis, directions).omega, m);
   const factor = cholesky(covariance(basis, directions), m);
   if (!root || !factor) return null;

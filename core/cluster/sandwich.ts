@@ -33,10 +33,10 @@ export function clusterErrors(basis: ClusterBasis, along: Float64Array): Cluster
     let sum3 = 0;
     for (let k = 0; k < p; k++, at++) {
       const term = along[at]! * turned[at]!;
-      const weighted = term * factor[at]!;
+      const f = factor[at]!;
       sum0 += term;
-      sum2 += weighted;
-      sum3 += weighted * factor[at]!;
+      sum2 += term * f;
+      sum3 += term * f * f;
     }
     cr0 += sum0 * sum0;
     cr2 += sum2 * sum2;

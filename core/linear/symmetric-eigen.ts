@@ -10,7 +10,7 @@ function eigenOfTwo(
   const b = s[at + 1]!;
   const d = s[at + 3]!;
   const half = 0.5 * (a - d);
-  const radius = Math.hypot(half, b);
+  const radius = Math.sqrt(half * half + b * b);
   const middle = 0.5 * (a + d);
   // The eigenvector of the larger value, taken from the side that does not cancel.
   let x = 1;
@@ -23,7 +23,7 @@ function eigenOfTwo(
       x = b;
       y = radius - half;
     }
-    const length = Math.hypot(x, y);
+    const length = Math.sqrt(x * x + y * y);
     x /= length;
     y /= length;
   }
