@@ -60,6 +60,8 @@ export type ReasonCode =
   | 'no_line_df'
   | 'joint_test_singular'
   | 'two_levels_only'
+  | 'too_few_for_split'
+  | 'same_mean_times'
   | 'left_out'
   | 'locked'
   | 'open_no_repeats'
@@ -69,7 +71,6 @@ export type ReasonCode =
   | 'not_fitted_serial'
   | 'not_fitted_mixed'
   | 'not_fitted_gee'
-  | 'not_fitted_within'
   | 'not_checked_assumptions';
 
 export interface Reason {

@@ -22,6 +22,7 @@ import type {
   PooledBlock,
   StructureBlock,
 } from './result.ts';
+import { withinBetween } from './within-block.ts';
 
 function inputBlock(table: GroupedTable, sha256: string | null): InputBlock {
   return {
@@ -110,6 +111,7 @@ export function analyse(long: LongTable, options: AnalyseOptions = {}): Analysis
   const lines = wants('lines')
     ? known(ownLinesBlock(own, table.subjects, structure))
     : notKnown('left_out');
+  const split = wants('within') ? withinBetween(table, structure) : notKnown('left_out');
   return {
     format: 'tetherline-analysis/1',
     engine: ENGINE_VERSION,
@@ -125,8 +127,7 @@ export function analyse(long: LongTable, options: AnalyseOptions = {}): Analysis
     lmm_reason: reasonText({ code: wants('lmm') ? 'not_fitted_mixed' : 'left_out' }),
     gee: null,
     gee_reason: reasonText({ code: wants('gee') ? 'not_fitted_gee' : 'left_out' }),
-    within_between: null,
-    within_between_reason: reasonText({ code: wants('within') ? 'not_fitted_within' : 'left_out' }),
+    ...nullable('within_between', split),
     assumptions: null,
     assumptions_reason: reasonText({
       code: wants('assumptions') ? 'not_checked_assumptions' : 'left_out',

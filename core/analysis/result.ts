@@ -27,7 +27,7 @@ export interface AnalysisResult {
   lmm_reason?: string;
   gee: null;
   gee_reason?: string;
-  within_between: null;
+  within_between: WithinBetweenBlock | null;
   within_between_reason?: string;
   assumptions: null;
   assumptions_reason?: string;
@@ -218,6 +218,24 @@ export interface PooledBlock {
   /** All slope differences between groups together, with more than two levels. */
   group_test: GroupTestBlock | null;
   group_test_reason?: string;
+}
+
+export interface SplitSlope {
+  estimate: number;
+  se_cr2: number;
+  df: number | null;
+  df_reason?: string;
+  p: number | null;
+  p_reason?: string;
+}
+
+export interface WithinBetweenBlock {
+  within: SplitSlope;
+  between: SplitSlope | null;
+  between_reason?: string;
+  /** between − within. */
+  difference: SplitSlope | null;
+  difference_reason?: string;
 }
 
 export interface Advice {

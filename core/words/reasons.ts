@@ -25,6 +25,8 @@ export const reasonWords: Record<ReasonCode, (subjects: readonly string[]) => st
   no_line_df: () => 'No subject with a line has more than two readings.',
   joint_test_singular: () => 'The covariance of the slope differences is singular.',
   two_levels_only: () => 'With two levels the coefficient time_by_group is the test.',
+  too_few_for_split: () => 'There are too few readings for two slopes.',
+  same_mean_times: () => 'All subjects have the same mean time.',
   left_out: () => 'Left out on request.',
   locked: () => 'Locked; see ols_locked.',
   open_no_repeats: () => 'Not locked: no subject repeats.',
@@ -34,7 +36,6 @@ export const reasonWords: Record<ReasonCode, (subjects: readonly string[]) => st
   not_fitted_serial: () => 'Fits with serial correlation are not part of this version.',
   not_fitted_mixed: () => 'Mixed models are not part of this version.',
   not_fitted_gee: () => 'Estimating equations are not part of this version.',
-  not_fitted_within: () => 'The split into within and between is not part of this version.',
   not_checked_assumptions: () => 'Checks of further assumptions are not part of this version.',
 };
 
