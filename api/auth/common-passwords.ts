@@ -59,6 +59,9 @@ zaq1zaq1 zxc12345 zxcvbnm, zxcvbnm1 zxcvbnm123
     .split(/\s+/),
 );
 
+/** What is left of the words above without the digits and marks at their end. */
+const STEMS = new Set([...COMMON].map(stemOf).filter((stem) => stem.length >= 5));
+
 const RUNS = [
   'abcdefghijklmnopqrstuvwxyz',
   '01234567890',
@@ -69,10 +72,14 @@ const RUNS = [
 /** @param password in lower case */
 export function isCommonPassword(password: string): boolean {
   if (COMMON.has(password)) return true;
-  // A common one with a mark, a year or a few digits after it.
-  const stem = password.replace(/[0-9!?.*#$@_-]+$/, '');
-  if (stem.length >= 6 && password.length - stem.length <= 4 && COMMON.has(stem)) return true;
+  // A common word with a year, a mark or a few digits after it.
+  const stem = stemOf(password);
+  if (password.length - stem.length <= 6 && STEMS.has(stem)) return true;
   return isRepeated(password) || isRun(password);
+}
+
+function stemOf(word: string): string {
+  return word.replace(/[0-9!?.*#$@_-]+$/, '');
 }
 
 /** One to four letters over and over. */

@@ -33,7 +33,7 @@ export const routes: RouteDefinition[] = [
     handler: (context) => addMember(context, context.body),
   }),
   defineRoute({
-    method: 'put',
+    method: 'patch',
     path: '/api/studies/:study/members/:member',
     summary: 'Give a person other duties or sites',
     access: mayManageMembers,
@@ -43,7 +43,7 @@ export const routes: RouteDefinition[] = [
   }),
   defineRoute({
     method: 'post',
-    path: '/api/studies/:study/members/:member/removal',
+    path: '/api/studies/:study/members/:member/remove',
     summary: 'Take a person out of the study; what they did stays',
     access: mayManageMembers,
     body: removeMemberRequestSchema,

@@ -1,0 +1,427 @@
+import jwt from 'jsonwebtoken';
+import type { Response } from 'supertest';
+import type TestAgent from 'supertest/lib/agent.js';
+import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { startTestApp, type TestApp } from '../support/test-app.ts';
+import { makePerson, PASSWORD, type TestPerson } from './people.ts';
+
+let app: TestApp;
+let mira: TestPerson;
+let people = 0;
+
+const MINUTE = 60_000;
+
+beforeAll(async () => {
+  app = await startTestApp();
+});
+afterAll(() => app.close());
+beforeEach(async () => {
+  // A window of its own for every test, and a person nobody has tried yet.
+  app.clock.advance(24 * 60 * MINUTE);
+  people += 1;
+  mira = await makePerson(app.database, `Mira ${'x'.repeat(people)}`);
+});
+
+const knock = (agent: TestAgent, email: string, password: string) =>
+  agent.post('/api/sign-in').send({ email, password });
+
+function cookieOf(answer: Response, name: string): string {
+  const cookies = (answer.headers['set-cookie'] ?? []) as unknown as string[];
+  return cookies.find((cookie) => cookie.startsWith(`${name}=`)) ?? '';
+}
+const pairOf = (cookie: string): string => cookie.split(';')[0] ?? '';
+
+async function entries(action: string): Promise<Record<string, unknown>[]> {
+  return app.database.query(
+    `SELECT * FROM audit.entry WHERE chain = 'installation' AND action = $1 ORDER BY seq`,
+    [action],
+  );
+}
+
+describe('the door', () => {
+  it('answers 401 to an anonymous caller everywhere under /api, known or unknown, before any look-up', async () => {
+    const tries: [string, string][] = [
+      ['get', '/api/me'],
+      ['get', '/api/studies/not-an-id/members'],
+      ['post', '/api/accounts'],
+      ['get', '/api/nothing/here'],
+      ['get', '/api'],
+      ['get', '/API/me'],
+      ['get', '/api/me/'],
+      ['get', '/api//me'],
+      ['delete', '/api/sign-in'],
+    ];
+    for (const [method, path] of tries) {
+      const send = app.visitor()[method as 'get' | 'post' | 'delete'](path);
+      const answer = await send.send(method === 'post' ? '{ broken' : undefined);
+      expect([path, answer.status]).toEqual([path, 401]);
+      expect(answer.body).toMatchObject({ code: 'not_signed_in', status: 401 });
+      expect(answer.headers['content-type']).toContain('application/problem+json');
+    }
+  });
+
+  it('opens health, the description and the sign-in to everybody', async () => {
+    await app.visitor().get('/healthz').expect(200, { status: 'ok' });
+    await app.visitor().get('/readyz').expect(200, { status: 'ok' });
+    await app.visitor().get('/api/openapi.json').expect(200);
+    await app.visitor().get('/api/docs').expect(200);
+    await app.visitor().post('/api/sign-in').send({}).expect(422);
+  });
+
+  it('keeps every answer under /api out of caches and binds the browser', async () => {
+    const answer = await app.visitor().get('/api/me');
+    expect(answer.headers['cache-control']).toBe('no-store');
+    expect(answer.headers['content-security-policy']).toContain("script-src 'self'");
+    expect(answer.headers['content-security-policy']).not.toContain("script-src 'self' 'unsafe");
+    expect(answer.headers['x-powered-by']).toBeUndefined();
+    expect(answer.headers['x-request-id']).toBe(answer.body.requestId);
+  });
+
+  it('refuses a change that another site asks for, even with the cookie', async () => {
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    const before = await agent.get('/api/me');
+    const body = { theme: 'dark', version: before.body.account.version };
+    const others: Record<string, string>[] = [
+      { Origin: 'https://elsewhere.example' },
+      { Origin: 'null' },
+    ];
+    for (const headers of others) {
+      const answer = await agent.patch('/api/me').set(headers).send(body);
+      expect([answer.status, answer.body.code]).toEqual([403, 'origin_refused']);
+    }
+    const after = await agent.get('/api/me');
+    expect(after.body.account.theme).toBe('system');
+    await agent.patch('/api/me').send(body).expect(200);
+  });
+
+  it('names what is wrong with a body and keeps nothing of it', async () => {
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    const broken = await agent
+      .patch('/api/me')
+      .set('content-type', 'application/json')
+      .send('{"theme":');
+    expect([broken.status, broken.body.code]).toEqual([400, 'malformed_json']);
+    const form = await agent.patch('/api/me').type('form').send({ theme: 'dark' });
+    expect([form.status, form.body.code]).toEqual([415, 'json_expected']);
+    const wrong = await agent.patch('/api/me').send({ theme: 'pink', timeZone: 'Moon/Base' });
+    expect([wrong.status, wrong.body.code]).toEqual([422, 'invalid_request']);
+    expect(wrong.body.errors).toEqual([
+      { path: 'theme', message: 'Choose one of: system, light, dark.' },
+      { path: 'timeZone', message: 'Choose a time zone of the list.' },
+      { path: 'version', message: 'Fill this in.' },
+    ]);
+    const large = await agent.patch('/api/me').send({ theme: 'x'.repeat(2_000_000) });
+    expect([large.status, large.body.code]).toEqual([413, 'body_too_large']);
+  });
+});
+
+describe('signing in', () => {
+  it('gives cookies that no script can read and no other site can send', async () => {
+    const answer = await knock(app.visitor(), mira.email.toUpperCase(), PASSWORD).expect(200);
+    for (const [name, path] of [
+      ['tether_access', '/'],
+      ['tether_refresh', '/api/refresh'],
+      ['tether_device', '/api/sign-in'],
+    ] as const) {
+      const cookie = cookieOf(answer, name);
+      expect(cookie).toContain('HttpOnly');
+      expect(cookie).toContain('SameSite=Strict');
+      expect(cookie).toContain(`Path=${path};`);
+      expect(cookie).not.toContain('Secure');
+    }
+    expect(answer.body).toEqual({
+      accessExpiresAt: new Date(app.clock.now.getTime() + 5 * MINUTE).toISOString(),
+      absoluteExpiresAt: new Date(app.clock.now.getTime() + 12 * 60 * MINUTE).toISOString(),
+      idleMinutes: 20,
+      mustChangePassword: false,
+    });
+    expect(JSON.stringify(answer.body)).not.toContain('tether');
+  });
+
+  it('answers an unknown address, a wrong password and a closed account in the same words', async () => {
+    const closed = await makePerson(app.database, `Closed ${'y'.repeat(people)}`);
+    await app.database.query('UPDATE account SET disabled_at = $1 WHERE id = $2', [
+      app.clock.now,
+      closed.id,
+    ]);
+    const answers = [
+      await knock(app.visitor(), 'nobody@nowhere.example', PASSWORD),
+      await knock(app.visitor(), mira.email, 'not the password'),
+      await knock(app.visitor(), closed.email, PASSWORD),
+    ];
+    const said = answers.map(({ status, body }) => ({ ...body, status, requestId: '' }));
+    expect(said[0]).toMatchObject({ status: 401, code: 'sign_in_refused', params: {} });
+    expect(said[1]).toEqual(said[0]);
+    expect(said[2]).toEqual(said[0]);
+  });
+
+  it('does the same work for an address without an account', async () => {
+    const time = async (email: string) => {
+      const start = performance.now();
+      await knock(app.visitor(), email, 'not the password').expect(401);
+      return performance.now() - start;
+    };
+    await time('warm@nowhere.example');
+    const median = async (email: string) => {
+      const times: number[] = [];
+      for (let n = 0; n < 5; n += 1) times.push(await time(email));
+      return times.sort((a, b) => a - b)[2] ?? 0;
+    };
+    const known = await median(mira.email);
+    const unknown = await median('nobody@nowhere.example');
+    // Hashing takes the most of it; without it the unknown one would take a tenth.
+    expect(unknown).toBeGreaterThan(known * 0.4);
+    expect(unknown).toBeLessThan(known * 2.5);
+  });
+
+  it('writes what happened into the trail, without a password or an address nobody has', async () => {
+    await knock(app.visitor(), mira.email, 'hunter-secret-77');
+    await knock(app.visitor(), 'my-password-by-mistake@x.example', 'hunter-secret-77');
+    await knock(app.visitor(), mira.email, PASSWORD);
+    const refused = (await entries('sign-in refused')).slice(-2);
+    expect(refused.map((entry) => entry.entity_uid)).toEqual([mira.uid, null]);
+    const accepted = (await entries('sign-in accepted')).at(-1);
+    expect(accepted).toMatchObject({ actor_name: mira.name, entity_uid: mira.uid });
+    const all = await app.database.query<{ body: string }>('SELECT body FROM audit.entry');
+    const text = all.map(({ body }) => body).join('\n');
+    expect(text).not.toContain('hunter-secret-77');
+    expect(text).not.toContain('my-password-by-mistake');
+    expect(text).not.toContain(PASSWORD);
+  });
+
+  it('keeps passwords as argon2id and tokens as hashes', async () => {
+    const answer = await knock(app.visitor(), mira.email, PASSWORD);
+    const refresh = pairOf(cookieOf(answer, 'tether_refresh')).split('=')[1] ?? '';
+    const [account] = await app.database.query<{ password_hash: string }>(
+      'SELECT password_hash FROM account WHERE id = $1',
+      [mira.id],
+    );
+    expect(account?.password_hash).toMatch(/^\$argon2id\$v=19\$m=19456,t=2,p=1\$/);
+    const tokens = await app.database.query<{ token_hash: string }>(
+      'SELECT token_hash FROM refresh_token',
+    );
+    expect(tokens.map((row) => row.token_hash)).not.toContain(refresh);
+  });
+});
+
+describe('many wrong tries', () => {
+  const wrong = (agent: TestAgent, email: string) => knock(agent, email, 'not the password');
+
+  it('are held back after 20, known address or not, and let in again in the next window', async () => {
+    for (const email of [mira.email, 'nobody@nowhere.example']) {
+      const agent = app.visitor();
+      for (let n = 0; n < 20; n += 1) expect((await wrong(agent, email)).status).toBe(401);
+      const held = await wrong(agent, email);
+      expect(held.status).toBe(429);
+      expect(held.body).toMatchObject({ code: 'sign_in_throttled', params: { minutes: 15 } });
+      expect(Number(held.headers['retry-after'])).toBe(900);
+      // Not even the right password tells itself apart now.
+      expect((await knock(agent, email, PASSWORD)).status).toBe(429);
+    }
+    app.clock.advance(15 * MINUTE);
+    await knock(app.visitor(), mira.email, PASSWORD).expect(200);
+    expect(await entries('sign-in throttled')).toHaveLength(2);
+  });
+
+  it('do not lock out the person who signed in from this browser before', async () => {
+    const own = app.visitor();
+    await knock(own, mira.email, PASSWORD).expect(200);
+    const stranger = app.visitor();
+    for (let n = 0; n < 21; n += 1) await wrong(stranger, mira.email);
+    expect((await knock(stranger, mira.email, PASSWORD)).status).toBe(429);
+    await knock(own, mira.email, PASSWORD).expect(200);
+    // The mark opens nothing for another account, and has a limit of its own.
+    for (let n = 0; n < 20; n += 1) expect((await wrong(own, mira.email)).status).toBe(401);
+    expect((await wrong(own, mira.email)).status).toBe(429);
+  });
+
+  it('sent all at once can not slip past together', async () => {
+    const agent = app.visitor();
+    const answers = await Promise.all(Array.from({ length: 40 }, () => wrong(agent, mira.email)));
+    expect(answers.filter(({ status }) => status === 401)).toHaveLength(20);
+    expect(answers.filter(({ status }) => status === 429)).toHaveLength(20);
+  });
+
+  it('of the password asked again are held back too', async () => {
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    const again = (currentPassword: string) =>
+      agent.post('/api/me/password').send({ currentPassword, newPassword: 'harbour light 9 oak' });
+    for (let n = 0; n < 20; n += 1) expect((await again('wrong')).body.code).toBe('password_wrong');
+    const held = await again(PASSWORD);
+    expect([held.status, held.body.code]).toEqual([429, 'password_tries_spent']);
+    await knock(app.visitor(), mira.email, PASSWORD).expect(200);
+  });
+});
+
+describe('a session', () => {
+  it('lives by a short token that is renewed, and the old refresh token ends it for both', async () => {
+    const first = await knock(app.visitor(), mira.email, PASSWORD);
+    const stolen = pairOf(cookieOf(first, 'tether_refresh'));
+    app.clock.advance(5 * MINUTE);
+    const expired = await app
+      .visitor()
+      .get('/api/me')
+      .set('Cookie', pairOf(cookieOf(first, 'tether_access')));
+    expect([expired.status, expired.body.code]).toEqual([401, 'not_signed_in']);
+
+    const renewed = await app.visitor().post('/api/refresh').set('Cookie', stolen).expect(200);
+    const access = pairOf(cookieOf(renewed, 'tether_access'));
+    const next = pairOf(cookieOf(renewed, 'tether_refresh'));
+    expect(next).not.toBe(stolen);
+    await app.visitor().get('/api/me').set('Cookie', access).expect(200);
+
+    const reused = await app.visitor().post('/api/refresh').set('Cookie', stolen);
+    expect([reused.status, reused.body.code]).toEqual([401, 'session_ended']);
+    expect(cookieOf(reused, 'tether_access')).toContain('Expires=Thu, 01 Jan 1970');
+    await app.visitor().get('/api/me').set('Cookie', access).expect(401);
+    await app.visitor().post('/api/refresh').set('Cookie', next).expect(401);
+    const [session] = await app.database.query(
+      'SELECT revoked_reason FROM session WHERE account_id = $1',
+      [mira.id],
+    );
+    expect(session).toEqual({ revoked_reason: 'refresh token used twice' });
+    expect((await entries('refresh token reused')).at(-1)).toMatchObject({ entity_uid: mira.uid });
+  });
+
+  it('gives out one new token when the same one comes twice at once', async () => {
+    const first = await knock(app.visitor(), mira.email, PASSWORD);
+    const refresh = pairOf(cookieOf(first, 'tether_refresh'));
+    const answers = await Promise.all(
+      [1, 2, 3].map(() => app.visitor().post('/api/refresh').set('Cookie', refresh)),
+    );
+    expect(answers.map(({ status }) => status).sort()).toEqual([200, 401, 401]);
+  });
+
+  it('ends after 20 idle minutes, and a renewal in the background is no sign of work', async () => {
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    app.clock.advance(19 * MINUTE);
+    await agent.post('/api/refresh').expect(200);
+    app.clock.advance(MINUTE);
+    const idle = await agent.get('/api/me');
+    expect([idle.status, idle.body.code]).toEqual([401, 'session_ended']);
+    expect(idle.body.params).toEqual({ why: '20 minutes without use' });
+    await agent.post('/api/refresh').expect(401);
+  });
+
+  it('stays while a person works, and ends after 12 hours all the same', async () => {
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    const end = app.clock.now.getTime() + 12 * 60 * MINUTE;
+    while (app.clock.now.getTime() + 19 * MINUTE < end) {
+      app.clock.advance(19 * MINUTE);
+      await agent.post('/api/refresh').expect(200);
+      await agent.get('/api/me').expect(200);
+    }
+    app.clock.advance(end - app.clock.now.getTime());
+    const answer = await agent.post('/api/refresh');
+    expect(answer.body.params).toEqual({ why: '12 hours' });
+    await agent.get('/api/me').expect(401);
+  });
+
+  it('ends on the server at sign-out, though the token is still good', async () => {
+    const first = await knock(app.visitor(), mira.email, PASSWORD);
+    const access = pairOf(cookieOf(first, 'tether_access'));
+    const out = await app.visitor().post('/api/sign-out').set('Cookie', access).expect(204);
+    expect(cookieOf(out, 'tether_access')).toContain('Expires=Thu, 01 Jan 1970');
+    const after = await app.visitor().get('/api/me').set('Cookie', access);
+    expect(after.body).toMatchObject({ code: 'session_ended', params: { why: 'signed out' } });
+  });
+
+  it('is not made by a token of another key, kind, algorithm or form', async () => {
+    const first = await knock(app.visitor(), mira.email, PASSWORD);
+    const [session] = await app.database.query<{ uid: string }>(
+      'SELECT uid FROM session WHERE account_id = $1',
+      [mira.id],
+    );
+    const claims = { sid: session?.uid, exp: Math.floor(app.clock.now.getTime() / 1_000) + 60 };
+    const key = app.deps.secrets.jwtKey;
+    const forged = [
+      jwt.sign(claims, 'another key', { audience: 'access' }),
+      jwt.sign(claims, key, { audience: 'device' }),
+      jwt.sign(claims, key, { audience: 'access', algorithm: 'HS512' }),
+      jwt.sign(claims, null, { audience: 'access', algorithm: 'none' }),
+      pairOf(cookieOf(first, 'tether_device')).split('=')[1] ?? '',
+      'not.a.token',
+    ];
+    for (const token of forged) {
+      await app.visitor().get('/api/me').set('Cookie', `tether_access=${token}`).expect(401);
+    }
+    const good = jwt.sign(claims, key, { audience: 'access' });
+    await app.visitor().get('/api/me').set('Cookie', `tether_access=${good}`).expect(200);
+    // The same token in a header opens nothing.
+    await app.visitor().get('/api/me').set('Authorization', `Bearer ${good}`).expect(401);
+  });
+
+  it('is listed to its person and to nobody else, and can be ended from another', async () => {
+    const here = await app.signedIn(mira.email, PASSWORD);
+    const there = await app.signedIn(mira.email, PASSWORD);
+    const other = await makePerson(app.database, `Other ${'z'.repeat(people)}`);
+    const stranger = await app.signedIn(other.email, PASSWORD);
+    const list = await here.get('/api/me/sessions').expect(200);
+    expect(list.body.rows).toHaveLength(2);
+    const elsewhere = list.body.rows.find((row: { current: boolean }) => !row.current);
+    const foreign = await stranger.delete(`/api/me/sessions/${elsewhere.id}`);
+    expect(foreign.status).toBe(404);
+    await there.get('/api/me').expect(200);
+    await here.delete(`/api/me/sessions/${elsewhere.id}`).expect(204);
+    await there.get('/api/me').expect(401);
+    await here.get('/api/me').expect(200);
+  });
+});
+
+describe('the own password', () => {
+  const change = (agent: TestAgent, newPassword: string) =>
+    agent.post('/api/me/password').send({ currentPassword: PASSWORD, newPassword });
+
+  it('is changed with the old one, and every other session ends', async () => {
+    const here = await app.signedIn(mira.email, PASSWORD);
+    const there = await app.signedIn(mira.email, PASSWORD);
+    await change(here, 'harbour light 9 oak').expect(204);
+    await here.get('/api/me').expect(200);
+    await there.get('/api/me').expect(401);
+    await knock(app.visitor(), mira.email, PASSWORD).expect(401);
+    await knock(app.visitor(), mira.email, 'harbour light 9 oak').expect(200);
+  });
+
+  it('is at least 8 letters, not a common one, not the old one and not one’s own name', async () => {
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    const said = async (password: string) => (await change(agent, password)).body.code;
+    expect(await said('short 7')).toBe('invalid_request');
+    expect(await said('password123')).toBe('password_common');
+    expect(await said('Qwertyuiop')).toBe('password_common');
+    expect(await said('abababababab')).toBe('password_common');
+    expect(await said('Summer2026!')).toBe('password_common');
+    expect(await said(PASSWORD)).toBe('password_same');
+    expect(await said(`${mira.email.split('@')[0]}1`)).toBe('password_personal');
+    await knock(app.visitor(), mira.email, PASSWORD).expect(200);
+  });
+
+  it('is the first thing to change where it is a temporary one', async () => {
+    const fresh = await makePerson(app.database, `Fresh ${'w'.repeat(people)}`, {
+      mustChangePassword: true,
+    });
+    const agent = app.visitor();
+    const signed = await knock(agent, fresh.email, PASSWORD).expect(200);
+    expect(signed.body.mustChangePassword).toBe(true);
+    const refused = await agent.get('/api/me/sessions');
+    expect([refused.status, refused.body.code]).toEqual([403, 'password_change_needed']);
+    const me = await agent.get('/api/me').expect(200);
+    expect(me.body.account.mustChangePassword).toBe(true);
+    await change(agent, 'harbour light 9 oak').expect(204);
+    await agent.get('/api/me/sessions').expect(200);
+  });
+});
+
+describe('over TLS', () => {
+  it('cookies are Secure and the browser is told to stay with TLS', async () => {
+    const secure = await startTestApp({ env: { PUBLIC_URL: 'https://study.example' } });
+    try {
+      const person = await makePerson(secure.database, 'Tess Lane');
+      const answer = await knock(secure.visitor(), person.email, PASSWORD).expect(200);
+      expect(cookieOf(answer, 'tether_access')).toContain('Secure');
+      expect(cookieOf(answer, 'tether_refresh')).toContain('Secure');
+      expect(answer.headers['strict-transport-security']).toContain('max-age=31536000');
+    } finally {
+      await secure.close();
+    }
+  });
+});
