@@ -163,12 +163,7 @@ export const checkWords = {
   successiveMissing: 'Successive residuals need subjects with two readings or more.',
 
   unless: (text: string) => `Unless: ${text}`,
-  fitNames: {
-    pooled: 'Pooled line with cluster-robust errors, beside each subject’s own line',
-    pooled_line: 'Pooled line with cluster-robust errors, beside each subject’s own line',
-    wild_bootstrap: 'Wild cluster bootstrap for the pooled line',
-  },
-  fitPooled: 'Fit the pooled line',
+  fitPooled: 'Fit the pooled line and each own line',
   cautions: {
     count:
       'This measure is a count. A straight line is a caution here: counts can’t fall below zero and spread more where they are high.',

@@ -27,6 +27,7 @@ export const cutsWords = {
     sha256: 'Hash, first 12',
   },
 
+  freezeForbidden: 'Analysts of the study freeze cuts. Ask its owner for that role.',
   freezeHeading: 'Freeze a cut',
   freezeSentence:
     'A frozen cut can’t be changed or removed. Readings entered later make a new cut, with its difference to this one.',

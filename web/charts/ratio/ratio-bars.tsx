@@ -1,5 +1,5 @@
 /** The ratios of all coefficients in one picture: what leaves the page as a file. */
-import type { ReactElement } from 'react';
+import type { ReactElement, ReactNode } from 'react';
 import { chartsWords } from '../../words/charts.ts';
 import { formatRatio } from '../../words/numbers.ts';
 import { AxisName, FigureRow, r } from '../marks/axes.tsx';
@@ -19,6 +19,7 @@ type Props = {
   rows: readonly RatioRow[];
   /** The page's own table with the bars in it; files hold the bars alone. */
   page?: () => ReactElement;
+  children?: ReactNode;
   level?: 2 | 3;
 };
 
@@ -43,7 +44,9 @@ export function RatioBars(props: Props) {
       heightFor={() => head + props.rows.length * ROW + 78}
       marks={(size) => <RatioMarks picture={props.picture} rows={props.rows} size={size} />}
       page={props.page}
-    />
+    >
+      {props.children}
+    </Figure>
   );
 }
 

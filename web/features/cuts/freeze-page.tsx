@@ -17,7 +17,7 @@ export function FreezePage() {
       {mayFreeze ? (
         <Answer query={choices}>{(data) => <FreezeForm study={study.id} choices={data} />}</Answer>
       ) : (
-        <Forbidden roles={[words.roles.analyst]} />
+        <Forbidden sentence={text.freezeForbidden} />
       )}
     </Page>
   );
