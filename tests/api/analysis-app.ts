@@ -1,73 +1,49 @@
-/** The application on a test database, and people signed in to it by their cookies. */
-import pino from 'pino';
-import request from 'supertest';
-import { createApp } from '../../api/app.ts';
-import { loadConfig } from '../../api/config.ts';
-import { deriveSecrets } from '../../api/secrets.ts';
-import type { TestDatabase } from '../support/test-database.ts';
-import { PASSWORD, type Person, type StudyForTests } from './analysis-study.ts';
+/** The whole application with one study in it, and people signed in to it by their cookies. */
+import type request from 'supertest';
+import type TestAgent from 'supertest/lib/agent.js';
+import { startTestApp, type TestApp } from '../support/test-app.ts';
+import {
+  makeStudy,
+  PASSWORD,
+  type Person,
+  type StudyForTests,
+  type StudyOptions,
+} from './analysis-study.ts';
 
-export type Answer = request.Response;
+type Answer = request.Response;
 
 export interface AnalystApp {
-  /** Signs in once a person; answers 401 to null. */
+  database: TestApp['database'];
+  study: StudyForTests;
+  /** Paths are below the address of the study. Signs in once a person; null is nobody. */
   get(person: Person | null, path: string): Promise<Answer>;
   post(person: Person | null, path: string, body: object, key?: string): Promise<Answer>;
+  close(): Promise<void>;
 }
 
-/** What the analyst's routes never touch; a call would be a mistake. */
-function untouched<T extends object>(name: string): T {
-  return new Proxy({} as T, {
-    get: () => {
-      throw new Error(`${name} is not for these routes`);
-    },
-  });
-}
-
-/** @param study paths that begin with a slash are below this study's address */
-export async function appFor(database: TestDatabase, study: StudyForTests): Promise<AnalystApp> {
-  const app = createApp({
-    databases: await database.databases(),
-    store: untouched('the object store'),
-    mailer: untouched('the mailer'),
-    jobs: untouched('the queue'),
-    clock: () => study.clock.now,
-    config: loadConfig({ LOG_LEVEL: 'silent' }),
-    secrets: deriveSecrets('a'.repeat(64), 'tests'),
-    logger: pino({ level: 'silent' }),
-    threads: study.threads,
-    importThreads: untouched('the parsing threads'),
-  });
-  const sessions = new Map<Person, string[]>();
-  const cookiesOf = async (person: Person): Promise<string[]> => {
-    const held = sessions.get(person);
-    if (held) {
-      return held;
-    }
-    const answer = await request(app)
-      .post('/api/sign-in')
-      .send({ email: `${person}@${study.studyId}.example`, password: PASSWORD });
-    if (answer.status !== 200) {
-      throw new Error(`${person} could not sign in: ${answer.status} ${answer.text}`);
-    }
-    const cookies = ((answer.headers['set-cookie'] ?? []) as unknown as string[]).map(
-      (cookie) => cookie.split(';')[0] ?? '',
-    );
-    sessions.set(person, cookies);
-    return cookies;
+export async function openAnalysis(options: StudyOptions): Promise<AnalystApp> {
+  const app = await startTestApp();
+  const study = await makeStudy(app, options);
+  const agents = new Map<Person | null, Promise<TestAgent>>([
+    [null, Promise.resolve(app.visitor())],
+  ]);
+  const agentOf = (person: Person | null): Promise<TestAgent> => {
+    const agent =
+      agents.get(person) ?? app.signedIn(`${person}@${study.studyId}.example`, PASSWORD);
+    agents.set(person, agent);
+    return agent;
   };
   const address = (path: string) => `/api/studies/${study.studyUid}${path}`;
   return {
+    database: app.database,
+    study,
     async get(person, path) {
-      const asked = request(app).get(address(path));
-      return person === null ? asked : asked.set('Cookie', await cookiesOf(person));
+      return (await agentOf(person)).get(address(path));
     },
     async post(person, path, body, key) {
-      const asked = request(app).post(address(path)).send(body);
-      if (key !== undefined) {
-        asked.set('Idempotency-Key', key);
-      }
-      return person === null ? asked : asked.set('Cookie', await cookiesOf(person));
+      const asked = (await agentOf(person)).post(address(path)).send(body);
+      return key === undefined ? asked : asked.set('Idempotency-Key', key);
     },
+    close: app.close,
   };
 }

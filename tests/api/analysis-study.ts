@@ -1,6 +1,5 @@
 /** A study with the sleepstudy readings of lme4, made through the services, for tests of the analyst's side. */
 import { readFileSync } from 'node:fs';
-import { type AnalysisThreads, createAnalysisThreads } from '../../api/analysis-threads/threads.ts';
 import type { Actor } from '../../api/audit/actor.ts';
 import { inTransaction } from '../../api/audit/transaction.ts';
 import { hashPassword } from '../../api/auth/passwords.ts';
@@ -14,6 +13,7 @@ import { actInStudy, type StudyAct } from '../../api/features/subjects/study-act
 import { logVisit } from '../../api/features/visits/service.ts';
 import type { Databases } from '../../database/data-source.ts';
 import type { StudyRole } from '../../database/entities/index.ts';
+import type { TestApp } from '../support/test-app.ts';
 import type { TestDatabase } from '../support/test-database.ts';
 
 export const PASSWORD = 'a lamp beside the harbour';
@@ -35,16 +35,15 @@ export type Person = keyof typeof PEOPLE;
 export interface StudyForTests {
   studyId: string;
   studyUid: string;
-  clock: { now: Date };
-  threads: AnalysisThreads;
+  clock: TestApp['clock'];
   actor(person: Person): Actor;
   scope(person: Person): StudyScope;
   act<T>(person: Person, work: (act: StudyAct) => Promise<T>): Promise<T>;
 }
 
-const setup = (masked: boolean, shortName: string): SetupFileInput => ({
+const setup = (masked: boolean): SetupFileInput => ({
   format: 'tetherline-setup/1',
-  study: { name: `Night watch ${shortName}`, shortName, masked },
+  study: { name: 'Night watch', shortName: 'night-watch', masked },
   sites: [{ code: 'quay', name: 'Quay', timeZone: 'UTC' }],
   arms: [...ARMS],
   measures: [
@@ -71,26 +70,21 @@ const setup = (masked: boolean, shortName: string): SetupFileInput => ({
   visits: Array.from({ length: 10 }, (_, day) => ({ name: `Day ${day}`, targetDay: day })),
 });
 
-/** One thread for a whole test file: the machine is shared. */
-export function threadsForTests(): AnalysisThreads {
-  return createAnalysisThreads(1, (error) => {
-    throw error;
-  });
+export interface StudyOptions {
+  masked: boolean;
+  /** What is logged; lme4's sleepstudy unless said otherwise. */
+  load?: (study: StudyForTests) => Promise<void>;
 }
 
+/** With the readings, and with the allocation entered: sealed where the study is masked. */
 export async function makeStudy(
-  database: TestDatabase,
-  threads: AnalysisThreads,
-  options: { masked: boolean; shortName: string; withReadings?: boolean },
+  app: Pick<TestApp, 'database' | 'clock' | 'deps'>,
+  options: StudyOptions,
 ): Promise<StudyForTests> {
-  const databases = await database.databases();
-  const clock = { now: new Date('2026-12-01T12:00:00.000Z') };
+  const { database, clock } = app;
+  const { databases, threads } = app.deps;
   const study = await inTransaction(databases.masked, null, (tx) =>
-    createStudyFromSetup(
-      tx,
-      clock.now,
-      setupFileSchema.parse(setup(options.masked, options.shortName)),
-    ),
+    createStudyFromSetup(tx, clock.now, setupFileSchema.parse(setup(options.masked))),
   );
   const actors = await addPeople(database, study.id);
   const actor = (person: Person): Actor => {
@@ -104,7 +98,6 @@ export async function makeStudy(
     studyId: study.id,
     studyUid: study.uid,
     clock,
-    threads,
     actor,
     scope: (person) => ({
       db: databaseOf(databases, person),
@@ -126,18 +119,14 @@ export async function makeStudy(
         work,
       ),
   };
-  if (options.withReadings ?? true) {
-    await loadSleepStudy(made);
-    await made.act(options.masked ? 'statistician' : 'owner', (act) =>
-      enterAllocation(
-        act,
-        subjectCodes().map((subjectCode, at) => ({
-          subjectCode,
-          armName: ARMS[at % 2] ?? ARMS[0],
-        })),
-      ),
-    );
-  }
+  await (options.load ?? loadSleepStudy)(made);
+  const subjects = await database.query<{ code: string }>('SELECT code FROM subject ORDER BY id');
+  await made.act(options.masked ? 'statistician' : 'owner', (act) =>
+    enterAllocation(
+      act,
+      subjects.map(({ code }, at) => ({ subjectCode: code, armName: ARMS[at % 2] ?? ARMS[0] })),
+    ),
+  );
   return made;
 }
 
@@ -186,23 +175,28 @@ const rows = readFileSync(new URL('../reference/sleepstudy/data.csv', import.met
     return { code, day: Number(day), reaction: Number(reaction) };
   });
 
-export function subjectCodes(): string[] {
+function subjectCodes(): string[] {
   return [...new Set(rows.map((row) => row.code))];
 }
 
+/** Enrolled before the baseline that everybody shares. */
+export async function enrol(act: StudyAct, code: string): Promise<void> {
+  await enrolSubject(act, {
+    siteCode: 'quay',
+    code,
+    state: 'enrolled',
+    consentVersion: '1',
+    consentDate: '2026-10-30',
+    enrolmentDate: '2026-10-31',
+    baselineDate: BASELINE,
+  });
+}
+
 /** lme4's sleepstudy: 18 subjects, days 0 to 9. */
-export async function loadSleepStudy(study: StudyForTests): Promise<void> {
+async function loadSleepStudy(study: StudyForTests): Promise<void> {
   await study.act('coordinator', async (act) => {
     for (const [at, code] of subjectCodes().entries()) {
-      await enrolSubject(act, {
-        siteCode: 'quay',
-        code,
-        state: 'enrolled',
-        consentVersion: '1',
-        consentDate: '2026-10-30',
-        enrolmentDate: '2026-10-31',
-        baselineDate: BASELINE,
-      });
+      await enrol(act, code);
       for (const row of rows.filter((one) => one.code === code)) {
         await logVisit(act, {
           subjectCode: code,

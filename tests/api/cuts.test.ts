@@ -3,23 +3,20 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { correctReading } from '../../api/features/readings/service.ts';
 import { changeSubjectState } from '../../api/features/subjects/service.ts';
 import { logVisit } from '../../api/features/visits/service.ts';
-import { createTestDatabase, type TestDatabase } from '../support/test-database.ts';
-import { type AnalystApp, appFor } from './analysis-app.ts';
-import { ARMS, makeStudy, type StudyForTests, threadsForTests } from './analysis-study.ts';
+import type { TestDatabase } from '../support/test-database.ts';
+import { type AnalystApp, openAnalysis } from './analysis-app.ts';
+import { ARMS, type StudyForTests } from './analysis-study.ts';
 
 let database: TestDatabase;
 let study: StudyForTests;
 let app: AnalystApp;
-const threads = threadsForTests();
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  study = await makeStudy(database, threads, { masked: true, shortName: 'masked' });
-  app = await appFor(database, study);
+  app = await openAnalysis({ masked: true });
+  ({ database, study } = app);
 });
 afterAll(async () => {
-  await threads.close();
-  await database.drop();
+  await app.close();
 });
 
 const request = {

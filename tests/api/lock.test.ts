@@ -1,14 +1,12 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { createTestDatabase, type TestDatabase } from '../support/test-database.ts';
-import { type AnalystApp, appFor } from './analysis-app.ts';
-import { ARMS, makeStudy, type StudyForTests, threadsForTests } from './analysis-study.ts';
+import type { TestDatabase } from '../support/test-database.ts';
+import { type AnalystApp, openAnalysis } from './analysis-app.ts';
+import { ARMS } from './analysis-study.ts';
 
 let database: TestDatabase;
-let study: StudyForTests;
 let app: AnalystApp;
 let cut: string;
 let otherCut: string;
-const threads = threadsForTests();
 
 const specification = {
   measure: 'reaction',
@@ -19,9 +17,8 @@ const specification = {
 const reason = 'The referee asked for the textbook line beside the robust one.';
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  study = await makeStudy(database, threads, { masked: true, shortName: 'masked' });
-  app = await appFor(database, study);
+  app = await openAnalysis({ masked: true });
+  ({ database } = app);
   const freeze = (name: string) =>
     app.post('analyst', '/cuts', {
       name,
@@ -34,8 +31,7 @@ beforeAll(async () => {
   otherCut = (await freeze('Second')).body.id;
 });
 afterAll(async () => {
-  await threads.close();
-  await database.drop();
+  await app.close();
 });
 
 async function stored() {

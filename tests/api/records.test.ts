@@ -1,9 +1,9 @@
 import { createHash } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { canonicalJson } from '../../api/analysis-threads/canonical-json.ts';
-import { createTestDatabase, type TestDatabase } from '../support/test-database.ts';
-import { type AnalystApp, appFor } from './analysis-app.ts';
-import { makeStudy, PASSWORD, type StudyForTests, threadsForTests } from './analysis-study.ts';
+import type { TestDatabase } from '../support/test-database.ts';
+import { type AnalystApp, openAnalysis } from './analysis-app.ts';
+import { PASSWORD, type StudyForTests } from './analysis-study.ts';
 
 let database: TestDatabase;
 let study: StudyForTests;
@@ -11,7 +11,6 @@ let app: AnalystApp;
 let cut: string;
 let record: string;
 let contentSha256: string;
-const threads = threadsForTests();
 
 const specification = {
   measure: 'reaction',
@@ -22,9 +21,8 @@ const specification = {
 const runs = { specification, fit: 'pooled', purpose: 'planned' } as const;
 
 beforeAll(async () => {
-  database = await createTestDatabase();
-  study = await makeStudy(database, threads, { masked: true, shortName: 'masked' });
-  app = await appFor(database, study);
+  app = await openAnalysis({ masked: true });
+  ({ database, study } = app);
   const frozen = await app.post('analyst', '/cuts', {
     name: 'First',
     visitCutoff: '2026-11-30',
@@ -36,8 +34,7 @@ beforeAll(async () => {
   await app.post('analyst', `/cuts/${cut}/check`, { specification });
 });
 afterAll(async () => {
-  await threads.close();
-  await database.drop();
+  await app.close();
 });
 
 async function stored() {
