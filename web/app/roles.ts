@@ -11,5 +11,5 @@ export function rolesInWords(membership: Membership): string {
       ? `${words.roles[role]}, ${words.chair}`
       : words.roles[role];
   });
-  return words.common.list(names);
+  return names.join('; ');
 }

@@ -50,7 +50,7 @@ export function formatMoment(moment: string | null | undefined, zone: string): s
   }).formatToParts(at);
   const part = (type: Intl.DateTimeFormatPartTypes) =>
     parts.find((each) => each.type === type)?.value ?? '';
-  const day = `${part('day')} ${MONTHS[Number(part('month')) - 1] ?? ''} ${part('year')}`;
+  const day = `${Number(part('day'))} ${MONTHS[Number(part('month')) - 1] ?? ''} ${part('year')}`;
   return `${day}, ${part('hour')}:${part('minute')} ${part('timeZoneName')}`;
 }
 

@@ -73,7 +73,7 @@ export function Form<Values extends FieldValues, Output>(props: FormProps<Values
   return (
     <form
       noValidate
-      className={`grid max-w-full justify-items-start gap-4 ${props.className ?? ''}`}
+      className={`grid max-w-full grid-cols-[minmax(0,1fr)] justify-items-start gap-4 ${props.className ?? ''}`}
       onSubmit={(event) => {
         void form
           .handleSubmit(props.onSubmit)(event)

@@ -42,16 +42,16 @@ export function TextField(props: TextFieldProps) {
     >
       <FieldLabel label={props.label} hint={props.hint} optional={props.optional} />
       <FieldRow previous={props.previous}>
-        <span className="relative inline-block max-w-full">
+        <span
+          className="relative inline-block max-w-full"
+          style={{ width: `calc(${width}ch + 24px${unit ? ` + ${unit.length + 1}ch` : ''})` }}
+        >
           <Input
             ref={props.inputRef}
             type={type}
             inputMode={props.inputMode}
-            className={`control max-w-full ${props.mono ? 'figure' : ''}`}
-            style={{
-              width: `calc(${width}ch + 24px${unit ? ` + ${unit.length + 1}ch` : ''})`,
-              paddingRight: unit ? `calc(${unit.length}ch + 16px)` : undefined,
-            }}
+            className={`control w-full ${props.mono ? 'figure' : ''}`}
+            style={unit ? { paddingRight: `calc(${unit.length}ch + 16px)` } : undefined}
           />
           {unit ? (
             <span

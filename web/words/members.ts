@@ -44,6 +44,8 @@ export const membersWords = {
       'The unblinded statistician knows the arms, so holds no other duty here.',
     'board member': 'A board member decides on released data only, so holds no other duty here.',
   },
+  /** Sites are a list of their own, so duties are parted more strongly. */
+  dutyList: (duties: readonly string[]) => duties.join('; '),
   coordinatorOf: (sites: string) => `coordinator of ${sites}`,
   needsSite: 'A coordinator needs at least one site.',
 } as const;

@@ -47,7 +47,7 @@ export function FindSubject({ study }: { study: string }) {
       >
         <Label className="sr-only">{words.topBar.findSubjectLabel}</Label>
         <Input
-          className="control figure w-[22ch] max-w-full"
+          className="control figure w-[16ch] max-w-full placeholder:font-sans wide:w-[22ch]"
           placeholder={words.topBar.findSubject}
           aria-describedby={statusId}
           onKeyDown={(event) => {

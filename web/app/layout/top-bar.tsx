@@ -48,7 +48,7 @@ export function TopBar({ me, membership, signOut }: TopBarProps) {
           <span className="font-semibold">{membership.study.name}</span>
         ) : null}
         {duty ? <span className="text-faded">{duty}</span> : null}
-        <div className="no-print ml-auto flex flex-wrap items-center gap-x-6">
+        <div className="no-print flex w-full flex-wrap items-center justify-between gap-x-6 narrow:ml-auto narrow:w-auto">
           {membership?.places.includes('subjects') ? (
             <Suspense fallback={<span className="w-56" />}>
               <FindSubject study={membership.study.id} />

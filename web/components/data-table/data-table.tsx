@@ -58,6 +58,8 @@ export type DataTableProps<Row extends AnyRow> = {
   onPick?: (id: string) => void;
   /** Shown in place of the table where there are no rows and no filter is set. */
   empty?: ReactNode;
+  /** A short table inside a document: neither filters nor tools. */
+  plain?: boolean;
   /** Totals, above the rows. */
   totals?: ReactNode;
 };
@@ -152,26 +154,28 @@ export function DataTable<Row extends AnyRow>(props: DataTableProps<Row>) {
 
   return (
     <div>
-      <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-6">
-        <FilterLine
-          filters={filters}
-          control={control}
-          count={words.table.shown(server ? server.total : fitting.length, total, props.noun)}
-        />
-        <TableTools
-          columns={columns}
-          shown={shown}
-          setShown={control.setColumns}
-          dense={dense}
-          setDense={(next) => {
-            localStorage.setItem(DENSE, next ? 'yes' : 'no');
-            setDense(next);
-          }}
-          exportCsv={() => {
-            exportView().catch((error) => notify(sentenceOf(error), { urgent: true }));
-          }}
-        />
-      </div>
+      {props.plain ? null : (
+        <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-6">
+          <FilterLine
+            filters={filters}
+            control={control}
+            count={words.table.shown(server ? server.total : fitting.length, total, props.noun)}
+          />
+          <TableTools
+            columns={columns}
+            shown={shown}
+            setShown={control.setColumns}
+            dense={dense}
+            setDense={(next) => {
+              localStorage.setItem(DENSE, next ? 'yes' : 'no');
+              setDense(next);
+            }}
+            exportCsv={() => {
+              exportView().catch((error) => notify(sentenceOf(error), { urgent: true }));
+            }}
+          />
+        </div>
+      )}
       <div
         ref={frame}
         className="table-frame overflow-x-clip"

@@ -27,7 +27,7 @@ export function HeadingCell<Row>(props: {
       {props.sortable ? (
         <button
           type="button"
-          className="inline-flex min-h-6 items-baseline gap-1 text-left font-semibold whitespace-nowrap hover:text-ink"
+          className={`inline-flex min-h-6 items-baseline gap-1 text-left font-semibold whitespace-nowrap hover:text-ink ${column.numeric ? 'flex-row-reverse' : ''}`}
           onClick={props.onSort}
         >
           {text}

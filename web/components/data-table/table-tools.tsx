@@ -17,7 +17,7 @@ type TableToolsProps<Row> = {
 export function TableTools<Row>(props: TableToolsProps<Row>) {
   const { columns, shown } = props;
   return (
-    <div className="no-print flex flex-wrap items-center gap-x-4">
+    <div className="table-tools no-print flex flex-wrap items-center gap-x-4">
       <DialogTrigger>
         <Button weight="quiet">{words.table.columns}</Button>
         <Popover

@@ -84,6 +84,7 @@ export function MySessions() {
           rows={rows}
           rowId={(row) => row.id}
           initialSort={NEWEST_FIRST}
+          plain
         />
       )}
     </Answer>

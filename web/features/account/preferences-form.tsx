@@ -23,7 +23,7 @@ export function PreferencesForm({ account }: { account: Me['account'] }) {
 
   return (
     <form
-      className="grid justify-items-start gap-4"
+      className="grid grid-cols-[minmax(0,1fr)] justify-items-start gap-4"
       onSubmit={(event) => {
         event.preventDefault();
         change.mutate(

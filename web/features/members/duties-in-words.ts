@@ -3,7 +3,7 @@ import { words } from '../../words/en.ts';
 
 /** "coordinator of Alder and Birch", "board member, chair". */
 export function dutiesInWords(member: MemberView): string {
-  return words.common.list(
+  return words.members.dutyList(
     member.roles.map((role) => {
       if (role === 'coordinator' && member.sites.length > 0) {
         return words.members.coordinatorOf(words.common.list(member.sites.map(({ name }) => name)));

@@ -45,6 +45,7 @@ function SetupDocument({ view }: { view: SetupView }) {
           rows={visits}
           rowId={(row) => row.id}
           prefix="v-"
+          plain
         />
       </Section>
       <Section heading={text.measures}>
@@ -67,6 +68,7 @@ function SetupDocument({ view }: { view: SetupView }) {
           rows={sites}
           rowId={(row) => row.id}
           prefix="s-"
+          plain
         />
       </Section>
       <Section heading={text.arms} sentence={arms.length > 0 ? text.armsSentence : text.noArms}>
