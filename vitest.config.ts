@@ -38,7 +38,11 @@ export default defineConfig({
           name: 'browser',
           pool: 'forks',
           include: ['tests/browser/**/*.test.ts'],
-          globalSetup: ['tests/support/vitest-cluster.ts', 'tests/support/vitest-web-build.ts'],
+          globalSetup: [
+            'tests/support/vitest-cluster.ts',
+            'tests/support/vitest-web-build.ts',
+            'tests/support/vitest-demo.ts',
+          ],
           fileParallelism: false,
           testTimeout: 120_000,
           hookTimeout: 180_000,

@@ -161,7 +161,7 @@ function contradictions(
     faults.push({ variable, code, value });
   // Everybody can read the demo's passwords and the sink's letters: both stay on this machine.
   if (demo && !isLoopback(values.HOST)) refuse('HOST', 'demo-needs-loopback', values.HOST);
-  if (demo && !isLoopback(new URL(publicUrl).hostname)) {
+  if (demo && values.PUBLIC_URL !== undefined && !isLoopback(new URL(publicUrl).hostname)) {
     refuse('PUBLIC_URL', 'demo-needs-loopback', publicUrl);
   }
   if (demo && values.DATABASE_URL !== undefined) {

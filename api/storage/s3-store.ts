@@ -16,6 +16,9 @@ import {
 } from '@aws-sdk/client-s3';
 import { ObjectMissing, type ObjectStore, type StoredObject } from './object-store.ts';
 
+// The SDK would print a notice about its later versions at every start; ours is pinned to one for this Node.
+process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED = 'true';
+
 export interface S3Settings {
   endpoint: string | undefined;
   bucket: string;

@@ -1,4 +1,4 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { cpSync, mkdtempSync, rmSync } from 'node:fs';
 import { createServer } from 'node:http';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
@@ -6,6 +6,7 @@ import type { Express } from 'express';
 import { pino } from 'pino';
 import request from 'supertest';
 import type TestAgent from 'supertest/lib/agent.js';
+import { inject } from 'vitest';
 import { createApp } from '../../api/app.ts';
 import { openServices } from '../../api/cli/services.ts';
 import { loadConfig } from '../../api/config.ts';
@@ -13,6 +14,7 @@ import type { AppDeps } from '../../api/http/deps.ts';
 import { type SunkLetter, startSink } from '../../api/mail/sink.ts';
 import { deriveSecrets } from '../../api/secrets.ts';
 import { freePort } from '../../database/server/cluster.ts';
+import { TEST_MASTER_SECRET } from './test-cluster.ts';
 import { createTestDatabase, type TestDatabase } from './test-database.ts';
 
 /** A clock that stands still until a test moves it. */
@@ -47,6 +49,8 @@ export interface TestAppOptions {
   /** The clock runs: pages compare it with the browser's own. */
   realClock?: boolean;
   webRoot?: string;
+  /** With the demo's people and studies; only in tests/browser. */
+  demo?: boolean;
   /** More of the environment, as a person would set it. */
   env?: Record<string, string>;
 }
@@ -58,10 +62,12 @@ export async function startTestApp(options: TestAppOptions = {}): Promise<TestAp
     for (const closeOne of closers.splice(0).reverse()) await closeOne();
   };
   try {
-    const database = await createTestDatabase();
+    const demo = options.demo ? inject('demo') : undefined;
+    const database = await createTestDatabase(demo?.template);
     closers.push(database.drop);
     const dataFolder = mkdtempSync(join(tmpdir(), 'tetherline-app-'));
     closers.push(() => rmSync(dataFolder, { recursive: true, force: true }));
+    if (demo) cpSync(demo.folder, dataFolder, { recursive: true });
     const clock = testClock(options.now ?? new Date('2026-12-01T12:00:00Z'));
     const now = options.realClock ? () => new Date() : () => clock.now;
     const sink = await startSink(join(dataFolder, 'letters'), now);
@@ -69,7 +75,12 @@ export async function startTestApp(options: TestAppOptions = {}): Promise<TestAp
     const port = await freePort();
     const config = loadConfig({ DEMO: 'off', PORT: String(port), ...options.env });
     const services = await openServices(
-      { config, secrets: deriveSecrets('5e'.repeat(32), 'test'), dataFolder, urls: database.urls },
+      {
+        config,
+        secrets: deriveSecrets(TEST_MASTER_SECRET, 'test'),
+        dataFolder,
+        urls: database.urls,
+      },
       { logger: pino({ level: 'silent' }), clock: now, smtpUrl: sink.smtpUrl, poolSize: 5 },
     );
     closers.push(services.close);

@@ -9,10 +9,15 @@ export interface TestCluster extends RoleSettings {
   databasePrefix: string;
 }
 
+/** Of tests alone: what it derives is the same in the process that plays the demo and in those that open it. */
+export const TEST_MASTER_SECRET = '5e'.repeat(32);
+
 declare module 'vitest' {
   export interface ProvidedContext {
     cluster: TestCluster;
     /** Folder of the pages as they were built for this run. */
     webFolder: string;
+    /** The demo, played once: its database to copy and the folder of its files. */
+    demo: { template: string; folder: string };
   }
 }
