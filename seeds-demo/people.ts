@@ -28,9 +28,3 @@ export const demoPeople: DemoPerson[] = accounts.map((account) => {
   const role = account.role as DemoRole;
   return { ...account, role, name: NAMES[role] };
 });
-
-export function demoPerson(role: DemoRole): DemoPerson {
-  const person = demoPeople.find((candidate) => candidate.role === role);
-  if (!person) throw new Error(`no demo account for ${role}`);
-  return person;
-}

@@ -22,6 +22,13 @@ const SITES = [
   { code: 'CRE', letters: 'CR', subjects: 44 },
 ] as const;
 
+const MISS_REASONS = [
+  'ill or in hospital',
+  'away',
+  'could not be reached',
+  'weather or transport',
+] as const;
+
 const ENROLMENT_OPENED_DAYS_AGO = 560;
 const ENROLMENT_LASTED_DAYS = 430;
 
@@ -34,7 +41,11 @@ export type CohortVisit = {
   readings: CohortReading[];
   notDone: { measure: string; category: 'instrument failure' | 'subject refused' }[];
 };
-export type CohortMiss = { planned: string; recordedOn: string; reason: string };
+export type CohortMiss = {
+  planned: string;
+  recordedOn: string;
+  reason: (typeof MISS_REASONS)[number];
+};
 export type CohortEnd = {
   on: string;
   state: 'withdrawn from visits' | 'consent withdrawn' | 'lost to follow-up' | 'died' | 'completed';
@@ -52,8 +63,6 @@ export type CohortSubject = {
   misses: CohortMiss[];
   end: CohortEnd | null;
 };
-
-const MISS_REASONS = ['ill or in hospital', 'away', 'could not be reached', 'weather or transport'];
 
 /** @param today the day of seeding, to which all dates count back */
 export function harrowFenCohort(today: string): CohortSubject[] {

@@ -16,7 +16,7 @@ import { type Duties, refuseDuties } from './policy.ts';
 import { type AccountOfMember, sitesOf, writeDuties } from './write-duties.ts';
 
 export interface MemberContext {
-  deps: AppDeps;
+  deps: Pick<AppDeps, 'databases' | 'clock'>;
   actor: Actor;
   membership: StudyMembership;
 }

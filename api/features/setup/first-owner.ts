@@ -37,22 +37,32 @@ export async function makeFirstOwner(
   }
   const now = clock();
   return inTransaction(db, null, async (tx) => {
-    await createAccount(tx, now, administrator, true);
-    const account = await createAccount(tx, now, owner, false);
-    const study = await createStudyFromSetup(tx, now, input.setup);
-    const membership = await tx.manager
-      .getRepository(Membership)
-      .save({ studyId: study.id, accountId: account.id, role: 'owner', createdAt: now });
-    tx.audit({
-      at: now,
-      studyUid: study.uid,
-      action: 'member added',
-      entity: 'membership',
-      entityUid: membership.uid,
-      after: { account: account.uid, roles: ['owner'] },
-    });
-    return study;
+    await accountWithPassword(tx, now, administrator, true);
+    const account = await accountWithPassword(tx, now, owner, false);
+    return foundStudy(tx, now, input.setup, account);
   });
+}
+
+/** A study from its set-up with the one member who can add the others. */
+export async function foundStudy(
+  tx: Tx,
+  now: Date,
+  setup: SetupFile,
+  owner: Pick<Account, 'id' | 'uid'>,
+): Promise<Study> {
+  const study = await createStudyFromSetup(tx, now, setup);
+  const membership = await tx.manager
+    .getRepository(Membership)
+    .save({ studyId: study.id, accountId: owner.id, role: 'owner', createdAt: now });
+  tx.audit({
+    at: now,
+    studyUid: study.uid,
+    action: 'member added',
+    entity: 'membership',
+    entityUid: membership.uid,
+    after: { account: owner.uid, roles: ['owner'] },
+  });
+  return study;
 }
 
 function checkPerson(who: 'administrator' | 'owner', person: FirstPerson): FirstPerson {
@@ -70,7 +80,8 @@ function checkPerson(who: 'administrator' | 'owner', person: FirstPerson): First
   return checked;
 }
 
-async function createAccount(
+/** An account whose password is known from the start, and so need not be changed. */
+export async function accountWithPassword(
   tx: Tx,
   now: Date,
   person: FirstPerson,
