@@ -162,5 +162,6 @@ export const commonProblems: ProblemSentences = {
   already_done: 'This was done already. Load the page again to see the result.',
   busy: 'Others changed the same data at this moment. Nothing was kept; try again.',
   failed: 'The server could not do this. Nothing was changed.',
+  not_ready: 'The database or the file storage can’t be reached at this moment. Try again soon.',
   job_finished: 'This work has finished, so it can’t be cancelled.',
 };

@@ -22,6 +22,7 @@ import {
   topBarWords,
 } from './common.ts';
 import { cutsProblems, cutsWords } from './cuts.ts';
+import { entryProblems } from './entry.ts';
 import { fitWords } from './fit.ts';
 import { helpWords } from './help.ts';
 import { homeWords } from './home.ts';
@@ -72,6 +73,7 @@ export const problems: ProblemSentences = {
   ...membersProblems,
   ...setupProblems,
   ...subjectsProblems,
+  ...entryProblems,
   ...importProblems,
   ...accountsProblems,
   ...securityProblems,

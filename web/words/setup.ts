@@ -70,4 +70,14 @@ export const setupWords = {
     from === to ? `${formatNumber(from)} only` : `${formatNumber(from)} to ${formatNumber(to)}`,
 } as const;
 
-export const setupProblems: ProblemSentences = {};
+export const setupProblems: ProblemSentences = {
+  setup_study_exists:
+    'A study with the short name “{shortName}” exists already. Choose another short name.',
+  setup_file_invalid: 'The set-up file can’t be used as it stands. Nothing was made.',
+  first_owner_same:
+    'The administrator and the owner have the same address. An administrator never sees study data: give two accounts.',
+  allocation_not_here: 'The allocation is entered by the unblinded statistician only.',
+  allocation_row_unknown:
+    'Row {row} of the list names a subject or an arm that the study does not have.',
+  allocation_twice: 'Row {row} of the list names a subject that is listed already.',
+};
