@@ -10,16 +10,13 @@ const READERS = ['owner', 'monitor', 'coordinator'] as const;
 const subjectUid = (world: World): Promise<string> =>
   world.once('subjects: one', async () => {
     const { coordinator } = world.people;
-    const [account] = await world.query<{ id: string }>('SELECT id FROM account WHERE uid = $1', [
-      coordinator.uid,
-    ]);
     const subject = await actInStudy(
       {
         db: world.app.deps.databases.masked,
         actor: {
-          accountId: account?.id ?? '',
+          accountId: coordinator.id,
           accountUid: coordinator.uid,
-          name: 'The coordinator',
+          name: coordinator.name,
           role: 'coordinator',
           sessionUid: null,
           requestId: null,
