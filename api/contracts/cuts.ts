@@ -93,6 +93,7 @@ export const cutDetailSchema = cutSummarySchema.extend({
   withdrawnLeftOut: z.object({ subjects: z.number().int(), readings: z.number().int() }),
   /** Against the cut before it; null for the first. */
   difference: cutDifferenceSchema.nullable(),
+  /** The first thousand of each; `late` and `pending` tell how many there are. */
   lateRows: z.array(
     z.object({
       subjectCode: z.string(),

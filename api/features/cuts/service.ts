@@ -16,6 +16,9 @@ import { findCut, type StoredCut, toSummary } from './cut-repository.ts';
 import type { StudyScope } from './scope.ts';
 import { readStudyPlan } from './study-plan.ts';
 
+/** Late and pending rows are read by people; the whole of them stays with the cut. */
+const ROWS_SHOWN = 1_000;
+
 /** @throws Problem not_found, in the words used for anything unknown */
 export async function cutOf(scope: StudyScope, cutUid: string): Promise<StoredCut> {
   const cut = await findCut(scope.db.manager, scope.studyId, cutUid);
@@ -33,8 +36,8 @@ export async function cutDetail(scope: StudyScope, cutUid: string): Promise<CutD
     includeWithdrawnReason: cut.includeWithdrawnReason,
     withdrawnLeftOut: cut.withdrawnLeftOut,
     difference: cut.difference,
-    lateRows: cut.lateRows,
-    pendingRows: cut.pendingRows,
+    lateRows: cut.lateRows.slice(0, ROWS_SHOWN),
+    pendingRows: cut.pendingRows.slice(0, ROWS_SHOWN),
     groups: cut.groups,
   };
 }
