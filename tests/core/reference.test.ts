@@ -84,6 +84,11 @@ describe.each(cases)('against R: $name', ({ folder, reference }) => {
     expect(got.not_fitted.map((s) => s.subject)).toEqual(not_fitted);
   });
 
+  test('time split within and between subjects (clubSandwich)', () => {
+    const got = present(resultOf(folder, reference).within_between, 'within_between');
+    expect(differences(got, reference.within_between, CLOSED_FORM)).toEqual([]);
+  });
+
   test('no NaN, no Infinity, no null without a reason, and JSON gives it back', () => {
     const result = resultOf(folder, reference);
     expect(holes(result)).toEqual([]);

@@ -4,6 +4,7 @@
  * when something it needs is not there.
  */
 import { readdirSync } from 'node:fs';
+import { availableParallelism, loadavg } from 'node:os';
 import { MissingTool } from './missing-tool.ts';
 
 interface Bench {
@@ -24,6 +25,7 @@ async function main(asked: string[]): Promise<number> {
     return 2;
   }
   for (const name of asked.length > 0 ? asked : known) {
+    warnIfBusy();
     const bench = (await import(new URL(`${name}.bench.ts`, here).href)) as Bench;
     console.log(`\n${bench.title}`);
     try {
@@ -35,6 +37,17 @@ async function main(asked: string[]): Promise<number> {
     }
   }
   return 0;
+}
+
+/** Times by the wall clock mean little while others use the machine; ratios of interleaved runs still do. */
+function warnIfBusy(): void {
+  const load = loadavg()[0] ?? 0;
+  const cores = availableParallelism();
+  if (load > cores) {
+    console.log(
+      `\nThe machine is busy (load ${load.toFixed(1)} on ${cores} cores): limits are not judged fairly.`,
+    );
+  }
 }
 
 process.exitCode = await main(process.argv.slice(2));

@@ -42,6 +42,7 @@ export interface ReferenceAnalysis {
     upper: number;
     df: number;
   }[];
+  within_between: Record<string, Record<string, number> | null>;
   wild_bootstrap?: Record<string, ReferenceWild>;
 }
 

@@ -3,6 +3,6 @@ local({
   here <- sub("^--file=", "", grep("^--file=", commandArgs(FALSE), value = TRUE))
   if (length(here)) setwd(dirname(normalizePath(here)))
 })
-for (f in c("model", "pooled", "dependence", "lines", "wild", "write")) {
+for (f in c("model", "pooled", "dependence", "lines", "wild", "within-between", "write")) {
   source(file.path("..", "lib", paste0(f, ".R")))
 }

@@ -25,8 +25,8 @@ wild_p <- function(X, y, subject, k, W, value = 0) {
   base <- restricted$fitted.values + value * X[, k]
   draws <- base + restricted$residuals * W[subject, ]
   t <- cr1_t(X, draws, subject, k, value)
-  # 0/0 is no evidence: a draw without spread and without distance does not count.
-  mean(ifelse(is.finite(t), abs(t) >= abs(t0) * (1 - 1e-9), FALSE))
+  # 0/0 is no evidence and does not count; a distance without spread does.
+  mean(!is.nan(t) & abs(t) >= abs(t0) * (1 - 1e-9))
 }
 
 # Ends of {b : p(b) > .05}: outwards in steps of se/4 until p <= .05 eight times running, then

@@ -26,7 +26,8 @@ analysis_facts <- function(name, data, subject, time, response, group = NULL, wi
     name = name, data = data,
     columns = c(list(subject = subject, time = time, response = response), if (!is.null(group)) list(group = group)),
     structure = structure_facts(d), ols = ols_facts(d), pooled = pooled_facts(d),
-    independence = dependence_facts(d, serial_draws), per_subject = line_facts(d), band = I(band_facts(d))
+    independence = dependence_facts(d, serial_draws), per_subject = line_facts(d),
+    band = I(band_facts(d)), within_between = within_between_facts(d)
   )
   if (!is.null(wild)) facts$wild_bootstrap <- do.call(wild_facts, c(list(d), wild))
   facts
