@@ -112,9 +112,12 @@ function textColumn(lines: Lines, position: number): string[] {
 }
 
 function numberColumn(lines: Lines, name: string, position: number, comma: boolean): Float64Array {
-  return Float64Array.from(lines.rows, (row, k) =>
-    parseNumber(row[position]!, comma, { line: lines.line[k]!, column: name }),
-  );
+  const column = new Float64Array(lines.rows.length);
+  for (let k = 0; k < column.length; k++) {
+    const place = { line: lines.line[k]!, column: name };
+    column[k] = parseNumber(lines.rows[k]![position]!, comma, place);
+  }
+  return column;
 }
 
 /**

@@ -94,7 +94,10 @@ export function readArguments(args: readonly string[]): AnalyseArguments {
     columns,
     seed: wholeNumber('seed', values.get('seed')),
     draws: wholeNumber('draws', values.get('draws')),
-    only: values.get('only')?.split(','),
+    only: values
+      .get('only')
+      ?.split(',')
+      .map((part) => part.trim()),
     acknowledge: values.get('acknowledge'),
     timings,
     out: values.get('out'),

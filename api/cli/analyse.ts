@@ -103,4 +103,8 @@ function main(args: readonly string[]): void {
   }
 }
 
+// Whoever reads the result may stop early, as `head` does; that is no bug.
+process.stdout.on('error', (error: NodeJS.ErrnoException) => {
+  if (error.code !== 'EPIPE') throw error;
+});
 main(process.argv.slice(2));

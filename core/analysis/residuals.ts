@@ -15,15 +15,17 @@ export interface Residual {
   readonly row: number;
 }
 
-function listResiduals({ table, fit }: MeanModel, residuals: Float64Array): Residual[] {
+/** `dealt` are residuals in another order; without them each reading has its own. */
+function listResiduals({ table, fit }: MeanModel, dealt: Float64Array | null): Residual[] {
   const list: Residual[] = [];
   table.subjects.forEach((subject, i) => {
     const group = table.levels?.[table.level?.[i] ?? 0];
     for (let r = table.start[i]!; r < table.start[i + 1]!; r++) {
-      const response = table.response[r]!;
-      const fitted = response - fit.residuals[r]!;
-      const residual = residuals[r]!;
-      const base = { subject, time: table.time[r]!, residual, fitted, response: fitted + residual };
+      const own = table.response[r]!;
+      const fitted = own - fit.residuals[r]!;
+      const residual = dealt ? dealt[r]! : fit.residuals[r]!;
+      const response = dealt ? fitted + residual : own;
+      const base = { subject, time: table.time[r]!, residual, fitted, response };
       list.push({ ...base, ...(group === undefined ? {} : { group }), row: table.row[r]! });
     }
   });
@@ -38,7 +40,7 @@ function listResiduals({ table, fit }: MeanModel, residuals: Float64Array): Resi
  */
 export function residualsOf(table: LongTable): Residual[] {
   const model = meanModelOf(table);
-  return listResiduals(model, model.fit.residuals);
+  return listResiduals(model, null);
 }
 
 /**

@@ -1,4 +1,5 @@
 import { studentQuantile, studentTwoSided } from '../distributions/student-t.ts';
+import { dot, shiftAndScale } from '../linear/kernels.ts';
 import type { ClusterBasis } from './cluster-basis.ts';
 import { subjectsThatFix, turnDirection } from './cluster-basis.ts';
 import { type ClusterErrors, clusterErrors } from './sandwich.ts';
@@ -28,8 +29,10 @@ export function clusterContrast(
   h: Float64Array,
   estimate: number,
 ): ClusterContrast {
-  const along = turnDirection(basis, h);
-  const errors = clusterErrors(basis, along);
+  // In unit length, so that the fourth powers inside df stay in range whatever the units of time are.
+  const length = Math.sqrt(dot(h, h));
+  const along = turnDirection(basis, shiftAndScale(h, 0, 1 / length));
+  const errors = clusterErrors(basis, along, length);
   const df = satterthwaiteDf(basis, along);
   const fixedBy = subjectsThatFix(basis, along);
   const exact = !basis.fit.hasVariance;

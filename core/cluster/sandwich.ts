@@ -16,12 +16,17 @@ export interface ClusterErrors {
 const ROUNDING = 1e-13;
 
 /**
- * Standard errors of a contrast by CR0 to CR3; `along` is its `turnDirection` (G × p).
+ * Standard errors of a contrast by CR0 to CR3; `along` is the `turnDirection` (G × p) of its direction in unit
+ * length, `length` that direction's length.
  *
  * A_iQ_i = Q_iB_i with B_i = E f(Λ)E', so V(l'β̂) = Σ(h'B_ic_i)² (Liang & Zeger 1986; Bell & McCaffrey 2002;
  * Pustejovsky & Tipton 2018; identity target). CR3 has no G factor.
  */
-export function clusterErrors(basis: ClusterBasis, along: Float64Array): ClusterErrors {
+export function clusterErrors(
+  basis: ClusterBasis,
+  along: Float64Array,
+  length: number,
+): ClusterErrors {
   const { n, p } = basis.fit;
   const { turned, cr2: factor } = basis;
   let cr0 = 0;
@@ -43,11 +48,8 @@ export function clusterErrors(basis: ClusterBasis, along: Float64Array): Cluster
     cr3 += sum3 * sum3;
   }
   const g = basis.count;
-  // E_1'h is as long as h, so this is the ordinary variance σ²h'h.
-  let ordinary = 0;
-  for (let k = 0; k < p; k++) ordinary += basis.fit.sigmaSquared * along[k]! * along[k]!;
-  const root = (variance: number) =>
-    variance > ROUNDING * ROUNDING * ordinary ? Math.sqrt(variance) : 0;
+  const least = ROUNDING * ROUNDING * basis.fit.sigmaSquared;
+  const root = (variance: number) => (variance > least ? length * Math.sqrt(variance) : 0);
   return {
     cr0: root(cr0),
     cr1: root((cr0 * g) / (g - 1)),

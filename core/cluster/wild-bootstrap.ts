@@ -1,3 +1,4 @@
+import { dot, shiftAndScale } from '../linear/kernels.ts';
 import { type ClusterBasis, turnDirection } from './cluster-basis.ts';
 import { clusterErrors } from './sandwich.ts';
 import { drawWild, type WildDraws, wildP } from './wild-draws.ts';
@@ -74,21 +75,25 @@ export function wildBootstrap(
   draws: number,
   seed: number,
 ): WildBootstrap | null {
-  const se = clusterErrors(basis, turnDirection(basis, h)).cr1;
+  // In unit length, as the drawn pieces hold products of four directions.
+  const length = Math.sqrt(dot(h, h));
+  const unit = shiftAndScale(h, 0, 1 / length);
+  const scaled = estimate / length;
+  const se = clusterErrors(basis, turnDirection(basis, unit), 1).cr1;
   if (!basis.fit.hasVariance || !(se > 0)) return null;
   const source = weightSource(basis.count, draws, seed);
-  const drawn = drawWild(basis, h, source);
+  const drawn = drawWild(basis, unit, source);
   const enumerated = source.kind === 'rademacher_enumerated';
   const down = reach(drawn, se, -1);
   const up = reach(drawn, se, 1);
   const beside = enumerated && basis.count <= WEBB_BESIDE;
   return {
-    t: estimate / se,
-    p: wildP(drawn, estimate, se),
-    lower: down === null ? null : estimate - down * se,
-    upper: up === null ? null : estimate + up * se,
+    t: scaled / se,
+    p: wildP(drawn, scaled, se),
+    lower: down === null ? null : length * (scaled - down * se),
+    upper: up === null ? null : length * (scaled + up * se),
     draws: enumerated ? 2 ** basis.count : source.count,
     weights: source.kind,
-    webbP: beside ? wildP(drawWild(basis, h, webbSource(seed, draws)), estimate, se) : null,
+    webbP: beside ? wildP(drawWild(basis, unit, webbSource(seed, draws)), scaled, se) : null,
   };
 }

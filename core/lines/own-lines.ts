@@ -62,8 +62,18 @@ function fitOwnLine(table: GroupedTable, subject: number, from: number, to: numb
   return { subject, n, intercept, slope, slopeSe, sxx, rss };
 }
 
+/** Times closer than this share of the largest one differ by rounding, not by waiting. */
+const SAME_TIME = 1e-12;
+
+function largestSize(values: Float64Array): number {
+  let largest = 0;
+  for (let k = 0; k < values.length; k++) largest = Math.max(largest, Math.abs(values[k]!));
+  return largest;
+}
+
 /** Fits every subject's own line; a line needs two distinct times. */
 export function ownLines(table: GroupedTable): OwnLines {
+  const least = SAME_TIME * largestSize(table.time);
   const lines: OwnLine[] = [];
   const notFitted: { subject: number; reason: NotFittedReason }[] = [];
   let residualDf = 0;
@@ -73,7 +83,7 @@ export function ownLines(table: GroupedTable): OwnLines {
     const to = table.start[subject + 1]!;
     // Times rise within a subject, so the ends tell whether they differ.
     if (to - from < 2) notFitted.push({ subject, reason: 'one_reading' });
-    else if (table.time[from] === table.time[to - 1])
+    else if (table.time[to - 1]! - table.time[from]! <= least)
       notFitted.push({ subject, reason: 'one_time' });
     else {
       const line = fitOwnLine(table, subject, from, to);

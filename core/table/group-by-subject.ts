@@ -1,45 +1,128 @@
 import { StatsError } from '../errors.ts';
 import type { DroppedRow, DropReason, GroupedTable, LongTable } from './long-table.ts';
 
-/** Squares and sums of squares of anything within these bounds stay inside double precision. */
-const LARGEST = 1e100;
-const SMALLEST = 1e-100;
+/** Within these bounds squares of slopes, and sums of them, stay inside double precision. */
+const LARGEST = 1e70;
+const SMALLEST = 1e-70;
 
 function lineOf(table: LongTable, row: number): number {
   return table.line?.[row] ?? row + 2;
 }
 
-function missingFrom(table: LongTable, row: number): DropReason | null {
-  if (table.subject[row] === '') return 'no_subject';
-  if (Number.isNaN(table.time[row])) return 'no_time';
-  if (Number.isNaN(table.response[row])) return 'no_response';
-  if (table.group && table.group[row] === '') return 'no_group';
-  return null;
+function outOfScale(table: LongTable, column: 'time' | 'response', row: number): StatsError {
+  const value = table[column][row]!;
+  const line = lineOf(table, row);
+  if (!Number.isFinite(value)) return new StatsError('infinite_value', { column, line });
+  return new StatsError('out_of_scale', { column, line, value });
 }
 
-function refuseUnlessFinite(table: LongTable, row: number): void {
-  for (const column of ['time', 'response'] as const) {
-    const value = table[column][row]!;
-    const line = lineOf(table, row);
-    if (!Number.isFinite(value)) throw new StatsError('infinite_value', { column, line });
-    if (Math.abs(value) > LARGEST) throw new StatsError('out_of_scale', { column, line, value });
-  }
+/** The complete rows in file order, and the others with what they lack. */
+interface Sifted {
+  /** Positions of the used rows; only the first `count` are filled. */
+  readonly used: Int32Array;
+  readonly count: number;
+  readonly dropped: readonly DroppedRow[];
 }
 
-function refuseVanishing(table: LongTable, used: readonly number[], column: 'time' | 'response') {
-  let largest = 0;
-  let at = 0;
-  for (const row of used) {
-    const size = Math.abs(table[column][row]!);
-    if (size > largest) {
-      largest = size;
-      at = row;
+function sift(table: LongTable): Sifted {
+  const { subject, time, response, group } = table;
+  const rows = subject.length;
+  const used = new Int32Array(rows);
+  const dropped: DroppedRow[] = [];
+  let count = 0;
+  let largestTime = 0;
+  let largestResponse = 0;
+  let timeAt = 0;
+  let responseAt = 0;
+  for (let row = 0; row < rows; row++) {
+    const t = Math.abs(time[row]!);
+    const y = Math.abs(response[row]!);
+    let lacks: DropReason | null = null;
+    if (subject[row] === '') lacks = 'no_subject';
+    else if (Number.isNaN(t)) lacks = 'no_time';
+    else if (Number.isNaN(y)) lacks = 'no_response';
+    else if (group !== undefined && group[row] === '') lacks = 'no_group';
+    if (lacks !== null) {
+      dropped.push({ line: lineOf(table, row), reason: lacks });
+      continue;
     }
+    if (t > LARGEST) throw outOfScale(table, 'time', row);
+    if (y > LARGEST) throw outOfScale(table, 'response', row);
+    if (t > largestTime) {
+      largestTime = t;
+      timeAt = row;
+    }
+    if (y > largestResponse) {
+      largestResponse = y;
+      responseAt = row;
+    }
+    used[count] = row;
+    count++;
   }
-  if (largest > 0 && largest < SMALLEST) {
-    const value = table[column][at]!;
-    throw new StatsError('out_of_scale', { column, line: lineOf(table, at), value });
+  if (count === 0) throw new StatsError('no_usable_rows', { rows });
+  if (largestTime > 0 && largestTime < SMALLEST) throw outOfScale(table, 'time', timeAt);
+  if (largestResponse > 0 && largestResponse < SMALLEST) {
+    throw outOfScale(table, 'response', responseAt);
   }
+  return { used, count, dropped };
+}
+
+/** Subjects in order of first appearance, and whose each used row is. */
+interface Owners {
+  readonly subjects: string[];
+  /** `count` indices into `subjects`. */
+  readonly owner: Int32Array;
+  /** G + 1 offsets. */
+  readonly start: Int32Array;
+}
+
+function ownersOf(table: LongTable, { used, count }: Sifted): Owners {
+  const indexOf = new Map<string, number>();
+  const subjects: string[] = [];
+  const sizes: number[] = [];
+  const owner = new Int32Array(count);
+  let lastCode: string | null = null;
+  let last = 0;
+  for (let k = 0; k < count; k++) {
+    const code = table.subject[used[k]!]!;
+    // Files mostly list a subject's rows together.
+    if (code !== lastCode) {
+      const found = indexOf.get(code);
+      last = found ?? subjects.length;
+      lastCode = code;
+      if (found === undefined) {
+        indexOf.set(code, last);
+        subjects.push(code);
+        sizes.push(0);
+      }
+    }
+    owner[k] = last;
+    sizes[last]! += 1;
+  }
+  const start = new Int32Array(subjects.length + 1);
+  for (let i = 0; i < sizes.length; i++) start[i + 1] = start[i]! + sizes[i]!;
+  return { subjects, owner, start };
+}
+
+/** Positions of the used rows by subject and time. */
+function arrange(table: LongTable, { used, count }: Sifted, { owner, start }: Owners): Int32Array {
+  const next = start.slice();
+  const row = new Int32Array(count);
+  for (let k = 0; k < count; k++) {
+    const i = owner[k]!;
+    row[next[i]!] = used[k]!;
+    next[i]! += 1;
+  }
+  for (let i = 0; i < start.length - 1; i++) {
+    sortByTime(row, start[i]!, start[i + 1]!, table.time);
+  }
+  return row;
+}
+
+function pick(column: Float64Array, row: Int32Array): Float64Array {
+  const picked = new Float64Array(row.length);
+  for (let k = 0; k < row.length; k++) picked[k] = column[row[k]!]!;
+  return picked;
 }
 
 /** Sorts positions from … to − 1 of `row` by time; equal times stay in file order. Most files are sorted already. */
@@ -50,28 +133,29 @@ function sortByTime(row: Int32Array, from: number, to: number, time: Float64Arra
   row.subarray(from, to).sort((a, b) => time[a]! - time[b]! || a - b);
 }
 
-function levelsOfSubjects(
+/** The levels in use and the level of each subject; rows are looked at in file order. */
+function levelsOf(
   table: LongTable,
   group: readonly string[],
-  used: readonly number[],
-  subjectOf: Int32Array,
-  subjects: readonly string[],
+  { used, count }: Sifted,
+  { subjects, owner }: Owners,
 ): { levels: string[]; level: Int32Array } {
-  const own: (string | undefined)[] = new Array(subjects.length).fill(undefined);
-  used.forEach((row, k) => {
-    const i = subjectOf[k]!;
+  const own: string[] = new Array<string>(subjects.length).fill('');
+  for (let k = 0; k < count; k++) {
+    const row = used[k]!;
+    const i = owner[k]!;
     const value = group[row]!;
-    const first = own[i];
-    if (first === undefined) own[i] = value;
+    const first = own[i]!;
+    if (first === '') own[i] = value;
     else if (first !== value) {
       const parameters = { subject: subjects[i]!, first, second: value, line: lineOf(table, row) };
       throw new StatsError('two_levels', parameters);
     }
-  });
-  const levels = [...new Set(own as string[])].sort();
+  }
+  const levels = [...new Set(own)].sort();
   if (levels.length < 2) throw new StatsError('one_level', { level: levels[0] ?? '' });
   const index = new Map(levels.map((name, k) => [name, k]));
-  return { levels, level: Int32Array.from(own, (name) => index.get(name as string)!) };
+  return { levels, level: Int32Array.from(own, (name) => index.get(name)!) };
 }
 
 /**
@@ -87,59 +171,19 @@ export function groupBySubject(table: LongTable): GroupedTable {
   if (lengths.some((column) => column !== undefined && column.length !== rows)) {
     throw new StatsError('column_lengths', {});
   }
-  const dropped: DroppedRow[] = [];
-  const used: number[] = [];
-  for (let row = 0; row < rows; row++) {
-    const reason = missingFrom(table, row);
-    if (reason) dropped.push({ line: lineOf(table, row), reason });
-    else {
-      refuseUnlessFinite(table, row);
-      used.push(row);
-    }
-  }
-  if (used.length === 0) throw new StatsError('no_usable_rows', { rows });
-  refuseVanishing(table, used, 'time');
-  refuseVanishing(table, used, 'response');
-
-  const indexOf = new Map<string, number>();
-  const subjects: string[] = [];
-  const counts: number[] = [];
-  const subjectOf = new Int32Array(used.length);
-  used.forEach((row, k) => {
-    const code = table.subject[row]!;
-    let i = indexOf.get(code);
-    if (i === undefined) {
-      i = subjects.length;
-      indexOf.set(code, i);
-      subjects.push(code);
-      counts.push(0);
-    }
-    subjectOf[k] = i;
-    counts[i]! += 1;
-  });
-  const start = new Int32Array(subjects.length + 1);
-  counts.forEach((count, i) => {
-    start[i + 1] = start[i]! + count;
-  });
-  const next = start.slice(0, subjects.length);
-  const row = new Int32Array(used.length);
-  used.forEach((position, k) => {
-    const i = subjectOf[k]!;
-    row[next[i]!] = position;
-    next[i]! += 1;
-  });
-  for (let i = 0; i < subjects.length; i++) sortByTime(row, start[i]!, start[i + 1]!, table.time);
-
+  const sifted = sift(table);
+  const owners = ownersOf(table, sifted);
+  const row = arrange(table, sifted, owners);
   const grouping = table.group
-    ? levelsOfSubjects(table, table.group, used, subjectOf, subjects)
+    ? levelsOf(table, table.group, sifted, owners)
     : { levels: null, level: null };
   return {
     rows,
-    dropped,
-    subjects,
-    start,
-    time: Float64Array.from(row, (position) => table.time[position]!),
-    response: Float64Array.from(row, (position) => table.response[position]!),
+    dropped: sifted.dropped,
+    subjects: owners.subjects,
+    start: owners.start,
+    time: pick(table.time, row),
+    response: pick(table.response, row),
     levels: grouping.levels,
     level: grouping.level,
     row,

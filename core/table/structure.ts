@@ -14,6 +14,13 @@ export interface Structure {
   readonly shareFollowing: number;
 }
 
+function countDistinct(values: Float64Array): number {
+  const sorted = values.slice().sort();
+  let distinct = sorted.length > 0 ? 1 : 0;
+  for (let k = 1; k < sorted.length; k++) if (sorted[k] !== sorted[k - 1]) distinct++;
+  return distinct;
+}
+
 /** Counts the structure of a grouped table. */
 export function structureOf(table: GroupedTable): Structure {
   const { start, time } = table;
@@ -39,7 +46,7 @@ export function structureOf(table: GroupedTable): Structure {
       median: quantileOfSorted(counts, 0.5),
       max: counts[subjects - 1]!,
     },
-    distinctTimes: new Set(time).size,
+    distinctTimes: countDistinct(time),
     replicates,
     shareFollowing: (readings - subjects) / readings,
   };

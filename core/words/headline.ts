@@ -32,7 +32,13 @@ function structureSentence({ readings, subjects, subjectsWithRepeats }: Structur
 
 function iccPhrase(icc: HeadlineFacts['icc']): string {
   if (!icc) return '';
-  return ` (intraclass correlation ${rounded(icc.estimate)}, 95 % interval ${rounded(icc.lower)} to ${rounded(icc.upper)})`;
+  return ` (intraclass correlation ${rounded(icc.estimate)}, approximate 95 % interval ${rounded(icc.lower)} to ${rounded(icc.upper)})`;
+}
+
+/** With a negative correlation the effective number of readings is above their number. */
+function beyond(icc: HeadlineFacts['icc']): string {
+  if (!icc || icc.estimate >= 0) return '';
+  return ' The correlation is negative, so for a mean the readings count as more than their number.';
 }
 
 const NOT_JUDGED =
@@ -42,13 +48,13 @@ const sentences: Record<Verdict, (facts: HeadlineFacts) => string> = {
   no_repeats: () =>
     "Independence can't be examined from repeats; it is taken from the design of the study.",
   negative: ({ icc }) =>
-    `Readings of one subject differ more than readings of different subjects do${iccPhrase(icc)}.`,
+    `Readings of one subject differ more than readings of different subjects do${iccPhrase(icc)}.${beyond(icc)}`,
   repeats_none_detected: ({ icc, structure }) => {
     const few =
       structure.subjects < FEW_SUBJECTS
         ? ` With ${counted(structure.subjects, 'subject', 'subjects')} a quiet test has little power.`
         : '';
-    return `No likeness within subjects was detected${iccPhrase(icc)}, which is no evidence that there is none.${few} The design still ties the readings of a subject together.`;
+    return `No likeness within subjects was detected${iccPhrase(icc)}, which is no evidence that there is none.${beyond(icc)}${few} The design still ties the readings of a subject together.`;
   },
   exchangeable: ({ icc }) => `Readings of one subject are alike${iccPhrase(icc)}. ${NOT_JUDGED}`,
   serial: ({ icc }) =>
