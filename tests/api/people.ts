@@ -19,7 +19,10 @@ export async function makePerson(
   options: { administrator?: boolean; mustChangePassword?: boolean } = {},
 ): Promise<TestPerson> {
   hashed ??= hashPassword(PASSWORD);
-  const email = `${name.toLowerCase().replaceAll(/[^a-z]+/g, '.')}@people.example`;
+  const email = `${name
+    .toLowerCase()
+    .match(/[a-z]+/g)
+    ?.join('.')}@people.example`;
   const [row] = await database.query<{ id: string; uid: string }>(
     `INSERT INTO account (email, name, password_hash, administrator, must_change_password, created_at)
      VALUES ($1, $2, $3, $4, $5, '2026-01-01') RETURNING id, uid`,
