@@ -1,28 +1,58 @@
 import { createHash } from 'node:crypto';
-import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
+import {
+  existsSync,
+  mkdirSync,
+  mkdtempSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  statSync,
+} from 'node:fs';
 import { join } from 'node:path';
 
 /** Everything the build reads; a change in any of it makes the pages anew. */
 const INPUTS = ['web', 'api/contracts', 'core', 'vite.config.ts', 'package-lock.json'];
 
+/** Builds kept beside the present one, for servers that still hand out their files. */
+const KEPT = 3;
+
 /**
- * Builds the pages when their inputs changed.
+ * Builds the pages when their inputs changed. Each state of the inputs has a folder of its own, which
+ * appears whole: a server that runs never loses the files it has promised.
  * @returns the folder of the built pages
  */
-export async function buildWeb(root: string, say: (event: 'building') => void = () => undefined) {
-  const folder = join(root, 'dist/web');
-  const stamp = join(root, 'dist/web.stamp');
-  const hash = hashInputs(root);
-  const known = existsSync(stamp) ? readFileSync(stamp, 'utf8') : '';
-  if (known === hash && existsSync(join(folder, 'index.html'))) return folder;
-  say('building');
-  // A build that is cut off must not pass for a finished one.
-  rmSync(stamp, { force: true });
-  const { build } = await import('vite');
-  await build({ configFile: join(root, 'vite.config.ts'), logLevel: 'warn', mode: 'production' });
-  mkdirSync(join(root, 'dist'), { recursive: true });
-  writeFileSync(stamp, hash);
+export async function buildWeb(root: string, say: () => void = () => undefined): Promise<string> {
+  const dist = join(root, 'dist');
+  const folder = join(dist, `web-${hashInputs(root).slice(0, 16)}`);
+  if (existsSync(folder)) return folder;
+  say();
+  mkdirSync(dist, { recursive: true });
+  const draft = mkdtempSync(join(dist, 'building-'));
+  try {
+    const { build } = await import('vite');
+    await build({
+      configFile: join(root, 'vite.config.ts'),
+      logLevel: 'warn',
+      mode: 'production',
+      build: { outDir: draft, emptyOutDir: true },
+    });
+    // Another start may have been quicker with the same pages: then those are as good.
+    if (!existsSync(folder)) renameSync(draft, folder);
+  } finally {
+    rmSync(draft, { recursive: true, force: true });
+  }
+  dropOldBuilds(dist, folder);
   return folder;
+}
+
+function dropOldBuilds(dist: string, present: string): void {
+  const others = readdirSync(dist)
+    .filter((name) => name.startsWith('web-'))
+    .map((name) => join(dist, name))
+    .filter((folder) => folder !== present)
+    .sort((a, b) => statSync(b).mtimeMs - statSync(a).mtimeMs);
+  for (const folder of others.slice(KEPT)) rmSync(folder, { recursive: true, force: true });
 }
 
 function hashInputs(root: string): string {

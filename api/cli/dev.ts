@@ -83,7 +83,7 @@ async function develop(root: string): Promise<void> {
 function startApi(root: string, env: Record<string, string>): ChildProcess {
   return spawn(
     process.execPath,
-    ['--watch', '--watch-preserve-output', '--import', 'tsx', 'api/cli/serve.ts'],
+    ['--watch', '--watch-preserve-output', '--import', 'tsx', 'api/cli/serve.ts', '--api-only'],
     { cwd: root, env: { ...process.env, ...env }, stdio: ['ignore', 'inherit', 'inherit'] },
   );
 }

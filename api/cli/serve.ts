@@ -1,6 +1,6 @@
-import { existsSync } from 'node:fs';
-import { join, resolve } from 'node:path';
+import { resolve } from 'node:path';
 import { platformWords } from '../words/platform.ts';
+import { buildWeb } from './build-web.ts';
 import { runOrExplain } from './failure.ts';
 import { openInstallation } from './installation.ts';
 import { openLog } from './open-log.ts';
@@ -15,8 +15,8 @@ await runOrExplain(async () => {
   }
   const root = resolve(import.meta.dirname, '../..');
   const installation = await openInstallation(root, process.env);
-  const built = join(root, 'dist/web');
-  const webRoot = existsSync(join(built, 'index.html')) ? built : undefined;
+  // While pages are developed, Vite serves them and only the API is wanted from here.
+  const webRoot = process.argv.includes('--api-only') ? undefined : await buildWeb(root);
   const server = await runServer(installation, {
     webRoot,
     logger: openLog(installation.config),

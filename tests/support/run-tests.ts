@@ -29,7 +29,7 @@ const STEPS: Step[] = [
   },
   { name: 'arrows between rooms', args: ['./tests/support/arrows.mjs'] },
   { name: 'nothing unused', args: ['knip/bin/knip.js'] },
-  { name: 'build of the pages', args: ['vite/bin/vite.js', 'build', '--logLevel', 'warn'] },
+  { name: 'build of the pages', args: ['./tests/support/build-pages.mjs'] },
 ];
 
 /**
