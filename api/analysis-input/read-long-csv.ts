@@ -67,7 +67,8 @@ function breaksIn(row: readonly string[]): number {
 /** Splits the text into rows and keeps the line each begins on; blank lines are passed over. */
 function splitLines(text: string, delimiter: string): Lines {
   const { data, errors } = papaparse.parse<string[]>(text, { delimiter, newline: '\n' });
-  const problems = new Map(errors.map((error) => [error.row ?? 0, error.code]));
+  // The first problem of a row is its cause: a stray quote also leaves the field without an end.
+  const problems = new Map([...errors].reverse().map((error) => [error.row ?? 0, error.code]));
   const rows: string[][] = [];
   const line: number[] = [];
   let header: string[] | null = null;
