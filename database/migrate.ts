@@ -5,7 +5,6 @@ import { grantRights } from './rights.ts';
 import type { RoleSettings } from './role-names.ts';
 import { ensureRoles } from './roles.ts';
 
-export { roleUrls } from './role-names.ts';
 export { CreateRoleMissing } from './roles.ts';
 
 /** Two servers that start at once migrate one after the other. */

@@ -16,7 +16,7 @@ let database: TestDatabase;
 let databases: Databases;
 let actor: Actor;
 /** Each test writes a chain of its own. */
-let chain: string;
+let chain: ReturnType<typeof randomUUID>;
 
 beforeAll(async () => {
   database = await createTestDatabase();

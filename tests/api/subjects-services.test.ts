@@ -47,7 +47,7 @@ const refused = (problem: string, params: object = {}) => ({
   params: expect.objectContaining(params),
 });
 const countRows = async () => {
-  const [row] = await database.query(
+  const [row] = await database.query<Record<string, string>>(
     `SELECT (SELECT count(*) FROM subject) AS subjects, (SELECT count(*) FROM visit) AS visits,
             (SELECT count(*) FROM reading) AS readings, (SELECT count(*) FROM reading_revision) AS revisions,
             (SELECT count(*) FROM audit.entry) AS entries`,
@@ -283,7 +283,18 @@ describe('logging a visit', () => {
 
   it('stops once the study is locked', async () => {
     await database.query(`UPDATE study SET state = 'locked' WHERE id = $1`, [study.id]);
+    const before = await countRows();
     await expect(log()).rejects.toMatchObject(refused('study_not_open', { state: 'locked' }));
+    // Nothing was written but that it was tried.
+    expect(await countRows()).toEqual({ ...before, entries: String(Number(before?.entries) + 1) });
+    const [entry] = await database.query(
+      'SELECT action, actor_name FROM audit.entry WHERE chain = $1 ORDER BY seq DESC LIMIT 1',
+      [study.uid],
+    );
+    expect(entry).toEqual({
+      action: 'act refused: study not open',
+      actor_name: 'Kit coordinator',
+    });
     await database.query(`UPDATE study SET state = 'open' WHERE id = $1`, [study.id]);
   });
 });

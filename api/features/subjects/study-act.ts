@@ -29,11 +29,40 @@ export interface StudyActSettings {
 /**
  * Runs one act on a study: one transaction, with its audit entries.
  *
- * The study's row is held in share until the end, so that it can't be locked or closed half-way.
+ * The study's row is held in share until the end, so that it can't be locked or closed half-way. An act
+ * after that is refused, and that it was tried stays in the trail.
  *
  * @throws Problem `not_found` for an unknown study, `study_not_open` once it is locked or closed
  */
 export async function actInStudy<T>(
+  settings: StudyActSettings,
+  work: (act: StudyAct) => Promise<T>,
+): Promise<T> {
+  try {
+    return await actWhileOpen(settings, work);
+  } catch (error) {
+    if (error instanceof Problem && error.code === 'study_not_open') {
+      await auditRefusal(settings, error);
+    }
+    throw error;
+  }
+}
+
+async function auditRefusal(settings: StudyActSettings, problem: Problem): Promise<void> {
+  const { db, actor, clock, studyUid } = settings;
+  await inTransaction(db, actor, async (tx) =>
+    tx.audit({
+      at: clock(),
+      studyUid,
+      action: 'act refused: study not open',
+      entity: 'study',
+      entityUid: studyUid,
+      after: problem.params,
+    }),
+  );
+}
+
+function actWhileOpen<T>(
   settings: StudyActSettings,
   work: (act: StudyAct) => Promise<T>,
 ): Promise<T> {
