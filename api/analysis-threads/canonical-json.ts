@@ -1,4 +1,5 @@
-/** JSON with one spelling: keys in code-unit order at every depth and no white space. */
+/** JSON with one spelling, and its hash: keys in code-unit order at every depth and no white space. */
+import { createHash } from 'node:crypto';
 
 export type JsonValue =
   | string
@@ -37,4 +38,9 @@ export function canonicalJson(value: JsonValue): string {
 
 function isList(value: object): value is readonly JsonValue[] {
   return Array.isArray(value);
+}
+
+/** SHA-256, in lower-case hexadecimal, of the canonical text in UTF-8. */
+export function canonicalSha256(value: JsonValue): string {
+  return createHash('sha256').update(canonicalJson(value), 'utf8').digest('hex');
 }

@@ -1,7 +1,9 @@
 /** What goes into a computing thread and what comes out: plain values only, for they are copied. */
-import type { AnalysisResult, BandPoint } from '../../core/index.ts';
+import type { BandPoint } from '../../core/index.ts';
 import type { SpecificationInput } from '../contracts/analysis.ts';
 import type { UsedCounts } from './cut-table.ts';
+import type { Headline } from './headline.ts';
+import type { RecordContent } from './record-content.ts';
 
 export interface CutJob {
   /** The canonical CSV of the cut. */
@@ -52,24 +54,31 @@ export interface CheckAnswer {
   dealt: OwnResiduals[];
 }
 
+/** What of a record is settled before its fit runs. */
+export type RecordFrame = Omit<RecordContent, 'checkText' | 'resultText' | 'engine'>;
+
 export interface FitJob extends CutJob {
-  fit: 'pooled' | 'ordinary';
-  /** Why the ordinary fit is wanted, where readings repeat. */
-  acknowledge: string | null;
+  record: RecordFrame;
+  /** Opaque ids of the subjects by code, and who left early. */
+  ids: ReadonlyMap<string, string>;
+  ended: readonly { code: string; word: string; day: number | null }[];
 }
 
+/** Texts and not objects: they are stored as they are, and a large one costs the server's loop nothing. */
 export interface FitAnswer {
-  counts: UsedCounts;
   engine: string;
   repeats: boolean;
   checkText: string;
   /** Canonical JSON of the whole result. */
-  text: string;
-  result: AnalysisResult;
-  picture: PictureAnswer;
+  resultText: string;
+  /** JSON of the picture, as the contract has it. */
+  pictureText: string;
+  headline: Headline;
+  contentSha256: string;
 }
 
-export interface PictureAnswer {
+/** Before ids and ends are put to the subjects. */
+export interface Drawing {
   subjects: {
     code: string;
     group: string | null;

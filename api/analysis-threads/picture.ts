@@ -1,8 +1,9 @@
 /** What the spaghetti plot draws, from the used readings of a cut. */
+import type { z } from 'zod';
 import type { BandPoint } from '../../core/index.ts';
-import type { SpecificationInput } from '../contracts/analysis.ts';
+import type { pictureSchema, SpecificationInput } from '../contracts/analysis.ts';
 import { type CutTable, toUnit } from './cut-table.ts';
-import type { PictureAnswer } from './jobs.ts';
+import type { Drawing, FitJob } from './jobs.ts';
 
 /** Enough for a smooth edge of a band that bends. */
 const BAND_POINTS = 49;
@@ -51,13 +52,13 @@ export function bandTimes(readings: readonly UsedReading[]): number[] {
   );
 }
 
-export function pictureOf(
+export function drawingOf(
   readings: readonly UsedReading[],
   unit: SpecificationInput['unit'],
   line: readonly BandPoint[],
-): PictureAnswer {
-  const subjects = new Map<string, PictureAnswer['subjects'][number]>();
-  const visits = new Map<string, PictureAnswer['visits'][number]>();
+): Drawing {
+  const subjects = new Map<string, Drawing['subjects'][number]>();
+  const visits = new Map<string, Drawing['visits'][number]>();
   const lastTimes = new Map<string | null, Map<string, number>>();
   for (const { subject, time, response, group, visit, plannedDay } of readings) {
     const own = subjects.get(subject) ?? { code: subject, group, readings: [] };
@@ -75,7 +76,7 @@ export function pictureOf(
   for (const own of subjects.values()) {
     own.readings.sort((a, b) => a.time - b.time);
   }
-  const bands = new Map<string | null, PictureAnswer['band'][number]>();
+  const bands = new Map<string | null, Drawing['band'][number]>();
   for (const { group, ...point } of line) {
     const band = bands.get(group) ?? { group, points: [] };
     let remaining = 0;
@@ -89,5 +90,25 @@ export function pictureOf(
     subjects: [...subjects.values()],
     visits: [...visits.values()].sort((a, b) => a.time - b.time),
     band: [...bands.values()],
+  };
+}
+
+/** With opaque ids, and the ends of follow-up that the cut knows. */
+export function pictureOf(
+  drawing: Drawing,
+  { ids, ended, specification }: Pick<FitJob, 'ids' | 'ended' | 'specification'>,
+): z.infer<typeof pictureSchema> {
+  const ends = new Map(ended.map((end) => [end.code, end]));
+  const timeOf = (day: number | null) => (day === null ? null : toUnit(day, specification.unit));
+  return {
+    ...drawing,
+    subjects: drawing.subjects.map((subject) => {
+      const end = ends.get(subject.code);
+      return {
+        id: ids.get(subject.code) ?? subject.code,
+        ...subject,
+        ended: end ? { word: end.word, time: timeOf(end.day) } : null,
+      };
+    }),
   };
 }

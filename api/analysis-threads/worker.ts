@@ -14,16 +14,10 @@ import { canonicalJson, type JsonValue } from './canonical-json.ts';
 import { consequencesOf } from './consequences.ts';
 import { type CutTable, tableOfCut } from './cut-table.ts';
 import { type CutDifferenceCounts, differenceOfCuts } from './difference.ts';
-import type {
-  Answer,
-  CheckAnswer,
-  CutJob,
-  FitAnswer,
-  FitJob,
-  OwnResiduals,
-  PictureAnswer,
-} from './jobs.ts';
-import { bandTimes, pictureOf, usedReadings } from './picture.ts';
+import { headlineOf } from './headline.ts';
+import type { Answer, CheckAnswer, CutJob, FitAnswer, FitJob, OwnResiduals } from './jobs.ts';
+import { bandTimes, drawingOf, pictureOf, usedReadings } from './picture.ts';
+import { contentSha256 } from './record-content.ts';
 
 /** Opens the ordinary numbers for part 4 of the check, where they stand beside the robust ones. */
 const FOR_COMPARISON = 'beside the robust errors, in the independence check';
@@ -59,30 +53,33 @@ export function check(job: CutJob): Answer<CheckAnswer> {
 export function fit(job: FitJob): Answer<FitAnswer> {
   return answer(() => {
     const cut = tableOfCut(job.bytes, job.specification);
+    const { record } = job;
     const options = { seed: job.seed, sha256: job.sha256 };
+    const reason = record.fit === 'ordinary' ? record.acknowledgement?.reason : undefined;
     const result = analyse(
       cut.table,
-      job.fit === 'ordinary' && job.acknowledge !== null
-        ? { ...options, acknowledge: job.acknowledge }
-        : options,
+      reason === undefined ? options : { ...options, acknowledge: reason },
     );
-    return {
-      counts: cut.counts,
-      engine: ENGINE_VERSION,
-      repeats: repeatsIn(result),
+    const texts = {
       checkText: checkText(cut, result),
-      text: canonicalJson(asJson(result)),
-      picture: picture(cut, job),
-      result,
+      resultText: canonicalJson(asJson(result)),
+      engine: ENGINE_VERSION,
+    };
+    return {
+      ...texts,
+      repeats: repeatsIn(result),
+      pictureText: pictureText(cut, job),
+      headline: headlineOf(result, record.fit),
+      contentSha256: contentSha256({ ...record, ...texts }),
     };
   });
 }
 
-function picture(cut: CutTable, job: FitJob): PictureAnswer {
+function pictureText(cut: CutTable, job: FitJob): string {
   const used = usedReadings(cut);
-  const times = bandTimes(used);
-  const band = job.fit === 'ordinary' ? ordinaryBand : pooledBand;
-  return pictureOf(used, job.specification.unit, band(cut.table, times));
+  const band = job.record.fit === 'ordinary' ? ordinaryBand : pooledBand;
+  const line = band(cut.table, bandTimes(used));
+  return canonicalJson(asJson(pictureOf(drawingOf(used, job.specification.unit, line), job)));
 }
 
 /** The check as a record keeps it: amount, type and advice, and no ordinary number. */

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { canonicalJson } from '../../api/analysis-threads/canonical-json.ts';
 import { check, fit as runFit } from '../../api/analysis-threads/worker.ts';
+import { pictureSchema } from '../../api/contracts/analysis.ts';
 import {
   analysisResultSchema,
   independenceSchema,
@@ -82,13 +83,28 @@ describe.each(tables)('%s', (_what, rows) => {
     canonicalJson(opened.consequences.map((one) => ({ ...one })));
     canonicalJson([...opened.observed, ...opened.dealt].map((own) => [own.mean, ...own.residuals]));
     for (const kind of ['pooled', 'ordinary'] as const) {
-      const run = runFit({ ...job(group), fit: kind, acknowledge: 'because the test asks for it' });
+      const run = runFit({
+        ...job(group),
+        record: {
+          cut: { uid: 'c', number: 1, name: 'n', visitCutoff: '2026-01-01', sha256: 'f' },
+          specification: { ...job(group).specification, sha256: 's', number: 1 },
+          fit: kind,
+          purpose: 'planned',
+          acknowledgement: { by: 'b', at: 'a', reason: 'because the test asks for it' },
+          seed: 1,
+          createdBy: 'b',
+          createdAt: 'a',
+        },
+        ids: new Map(),
+        ended: [],
+      });
       if (!run.ok) {
         throw new Error(run.code);
       }
-      analysisResultSchema.parse(JSON.parse(run.text));
-      expect(run.picture.band.flatMap((band) => band.points)).toHaveLength(group ? 98 : 49);
-      for (const point of run.picture.band.flatMap((band) => band.points)) {
+      analysisResultSchema.parse(JSON.parse(run.resultText));
+      const picture = pictureSchema.parse(JSON.parse(run.pictureText));
+      expect(picture.band.flatMap((band) => band.points)).toHaveLength(group ? 98 : 49);
+      for (const point of picture.band.flatMap((band) => band.points)) {
         for (const value of [point.estimate, point.lower, point.upper, point.df]) {
           expect(value === null || Number.isFinite(value)).toBe(true);
         }

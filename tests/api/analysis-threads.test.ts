@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { tableOfCut } from '../../api/analysis-threads/cut-table.ts';
-import { bandTimes, pictureOf, usedReadings } from '../../api/analysis-threads/picture.ts';
+import { bandTimes, drawingOf, usedReadings } from '../../api/analysis-threads/picture.ts';
 
 const csv = [
   'subject,site,visit,planned,day,planned_day,replicate,y,y_note',
@@ -53,7 +53,7 @@ describe('picture', () => {
       upper: null,
       df: null,
     }));
-    const picture = pictureOf(readings, 'days', line);
+    const picture = drawingOf(readings, 'days', line);
     expect(picture.visits).toEqual([
       { name: 'V1', time: 0, n: 2 },
       { name: 'V2', time: 7, n: 1 },

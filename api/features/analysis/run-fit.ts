@@ -1,10 +1,11 @@
 /** Running a fit: refused before the check, locked where readings repeat, always leaving a record. */
 import { STAMP } from '../../../core/words/advice.ts';
 import { AnalysisRecord } from '../../../database/entities/index.ts';
-import type { Answer, FitAnswer } from '../../analysis-threads/jobs.ts';
+import type { Answer, FitAnswer, RecordFrame } from '../../analysis-threads/jobs.ts';
 import { inTransaction } from '../../audit/transaction.ts';
 import type { RunFitRequest } from '../../contracts/analysis.ts';
 import { Problem } from '../../http/problems.ts';
+import type { StoredCut } from '../cuts/cut-repository.ts';
 import type { StudyScope } from '../cuts/scope.ts';
 import {
   findAcknowledgement,
@@ -14,10 +15,7 @@ import {
   type StoredSpecification,
 } from './analysis-repository.ts';
 import { engineProblem } from './engine-problem.ts';
-import { headlineOf } from './headline.ts';
-import { pictureFor } from './picture-for.ts';
-import { jobOf, type Question, questionOf, SEED } from './question.ts';
-import { contentSha256 } from './record-content.ts';
+import { jobOf, type Question, questionOf, SEED, subjectIds } from './question.ts';
 import { acknowledgementView } from './views.ts';
 
 /**
@@ -32,15 +30,29 @@ export async function runFit(
 ): Promise<string> {
   const question = await questionOf(scope, cutUid, body.specification);
   const { specification, acknowledgement } = await pass(scope, question, body.fit);
+  const { cut } = question;
+  const now = scope.clock();
+  const { uid, number, name, visitCutoff, sha256 } = cut;
+  const record: RecordFrame = {
+    cut: { uid, number, name, visitCutoff, sha256 },
+    specification,
+    fit: body.fit,
+    purpose: body.purpose,
+    acknowledgement: acknowledgement && acknowledgementView(acknowledgement),
+    seed: SEED,
+    createdBy: scope.actor.accountUid,
+    createdAt: now.toISOString(),
+  };
   const fit = await scope.threads.fit({
     ...(await jobOf(scope, question)),
-    fit: body.fit,
-    acknowledge: acknowledgement?.reason ?? null,
+    record,
+    ids: await subjectIds(scope),
+    ended: cut.ended,
   });
   if (!fit.ok) {
     throw engineProblem(fit);
   }
-  return writeRecord(scope, question, body, specification, acknowledgement, fit);
+  return writeRecord(scope, { cut, specification, acknowledgement, record, fit, now });
 }
 
 /** The two gates, in the order in which a person meets them. */
@@ -69,30 +81,18 @@ async function pass(
   return { specification, acknowledgement };
 }
 
-async function writeRecord(
-  scope: StudyScope,
-  { cut }: Question,
-  body: RunFitRequest,
-  specification: StoredSpecification,
-  acknowledgement: StoredAcknowledgement | null,
-  fit: Extract<Answer<FitAnswer>, { ok: true }>,
-): Promise<string> {
-  const now = scope.clock();
-  const stamp = body.fit === 'ordinary' && fit.repeats ? STAMP : null;
-  const picture = await pictureFor(scope, cut, body.specification.unit, fit.picture);
-  const sha256 = contentSha256({
-    cut,
-    specification,
-    fit: body.fit,
-    purpose: body.purpose,
-    acknowledgement: acknowledgement && acknowledgementView(acknowledgement),
-    checkText: fit.checkText,
-    resultText: fit.text,
-    engine: fit.engine,
-    seed: SEED,
-    createdBy: scope.actor.accountUid,
-    createdAt: now.toISOString(),
-  });
+interface FinishedFit {
+  cut: StoredCut;
+  specification: StoredSpecification;
+  acknowledgement: StoredAcknowledgement | null;
+  record: RecordFrame;
+  fit: Extract<Answer<FitAnswer>, { ok: true }>;
+  now: Date;
+}
+
+async function writeRecord(scope: StudyScope, finished: FinishedFit): Promise<string> {
+  const { cut, specification, acknowledgement, fit, now } = finished;
+  const { fit: kind, purpose } = finished.record;
   return inTransaction(scope.db, scope.actor, async (tx) => {
     const repository = tx.manager.getRepository(AnalysisRecord);
     const record = await repository.save(
@@ -100,15 +100,15 @@ async function writeRecord(
         studyId: scope.studyId,
         cutId: cut.id,
         specificationId: specification.id,
-        fit: body.fit,
-        purpose: body.purpose,
+        fit: kind,
+        purpose,
         acknowledgementId: acknowledgement?.id ?? null,
         checkText: fit.checkText,
-        resultText: fit.text,
-        pictureText: JSON.stringify(picture),
-        headline: headlineOf(fit.result, body.fit),
-        stamp,
-        contentSha256: sha256,
+        resultText: fit.resultText,
+        pictureText: fit.pictureText,
+        headline: fit.headline,
+        stamp: kind === 'ordinary' && fit.repeats ? STAMP : null,
+        contentSha256: fit.contentSha256,
         engineVersion: fit.engine,
         seed: String(SEED),
         createdBy: scope.actor.accountId,
@@ -125,10 +125,10 @@ async function writeRecord(
         cut: cut.uid,
         specification: specification.sha256,
         number: specification.number,
-        fit: body.fit,
-        purpose: body.purpose,
+        fit: kind,
+        purpose,
         engine: fit.engine,
-        contentSha256: sha256,
+        contentSha256: fit.contentSha256,
       },
       reason: acknowledgement?.reason ?? null,
     });

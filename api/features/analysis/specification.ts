@@ -1,11 +1,6 @@
 /** What was asked of a cut, named by the hash of its one spelling. */
-import { createHash } from 'node:crypto';
-import { canonicalJson } from '../../analysis-threads/canonical-json.ts';
+import { canonicalSha256 } from '../../analysis-threads/canonical-json.ts';
 import type { SpecificationInput } from '../../contracts/analysis.ts';
-
-export function sha256Of(text: string): string {
-  return createHash('sha256').update(text, 'utf8').digest('hex');
-}
 
 /**
  * SHA-256 of the canonical JSON of cut, measure, axis, unit and group.
@@ -16,12 +11,7 @@ export function sha256Of(text: string): string {
  * @param cutUid the opaque id of the cut
  */
 export function specificationSha256(cutUid: string, input: SpecificationInput): string {
-  return sha256Of(specificationText(cutUid, input));
-}
-
-/** The canonical JSON that the hash is taken of. */
-export function specificationText(cutUid: string, input: SpecificationInput): string {
-  return canonicalJson({
+  return canonicalSha256({
     axis: input.axis,
     cut: cutUid,
     group: input.group,

@@ -1,13 +1,13 @@
 /** Queries on analysis records and their signatures; every one is scoped by study. */
 import type { EntityManager } from 'typeorm';
 import type { z } from 'zod';
+import type { Headline } from '../../analysis-threads/headline.ts';
 import type {
   fits,
   purposes,
   recordListQuerySchema,
   SpecificationInput,
 } from '../../contracts/analysis.ts';
-import type { Headline } from '../analysis/headline.ts';
 import type { CutMeasure } from '../cuts/cut-repository.ts';
 
 export const RECORD = 'analysis_record';

@@ -1,7 +1,12 @@
 /** Stored records to the shapes of the contracts and of the file. */
 import { canonicalJson, type JsonValue } from '../../analysis-threads/canonical-json.ts';
+import {
+  contentOf,
+  contentSha256,
+  type RecordContent,
+} from '../../analysis-threads/record-content.ts';
 import type { RecordSummary } from '../../contracts/analysis.ts';
-import { contentOf, contentSha256, type RecordContent } from '../analysis/record-content.ts';
+
 import type { RecordRow, StoredRecord, StoredSignature } from './record-repository.ts';
 
 export function summaryView(row: RecordRow): RecordSummary {

@@ -1,7 +1,6 @@
 /** What a record vouches for, in one spelling; its hash is what a signature is bound to. */
-import { canonicalJson, type JsonValue } from '../../analysis-threads/canonical-json.ts';
-import type { fits, purposes, SpecificationInput } from '../../contracts/analysis.ts';
-import { sha256Of } from './specification.ts';
+import type { fits, purposes, SpecificationInput } from '../contracts/analysis.ts';
+import { canonicalSha256, type JsonValue } from './canonical-json.ts';
 
 export interface RecordContent {
   cut: { uid: string; number: number; name: string; visitCutoff: string; sha256: string };
@@ -49,5 +48,5 @@ export function contentOf(record: RecordContent): JsonValue {
 }
 
 export function contentSha256(record: RecordContent): string {
-  return sha256Of(canonicalJson(contentOf(record)));
+  return canonicalSha256(contentOf(record));
 }

@@ -1,7 +1,7 @@
 /** The numbers that a list of records shows: the slope over time of the fit that was run. */
 import type { z } from 'zod';
-import type { AnalysisResult } from '../../../core/index.ts';
-import type { RunFitRequest, recordSummarySchema } from '../../contracts/analysis.ts';
+import type { AnalysisResult } from '../../core/index.ts';
+import type { RunFitRequest, recordSummarySchema } from '../contracts/analysis.ts';
 
 export type Headline = z.infer<typeof recordSummarySchema>['headline'];
 
