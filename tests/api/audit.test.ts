@@ -16,7 +16,7 @@ let database: TestDatabase;
 let databases: Databases;
 let actor: Actor;
 /** Each test writes a chain of its own. */
-let chain: ReturnType<typeof randomUUID>;
+let chain: string;
 
 beforeAll(async () => {
   database = await createTestDatabase();
@@ -114,7 +114,7 @@ describe('writing', () => {
 
   it('keeps the order of twenty writers on two chains at once', async () => {
     const before = await verifyChains(databases.masked);
-    const chains = [randomUUID(), randomUUID()];
+    const chains: string[] = [randomUUID(), randomUUID()];
     await Promise.all(
       Array.from({ length: 20 }, (_, at) =>
         inTransaction(databases.masked, actor, async (tx) => {

@@ -156,12 +156,13 @@ async function withCords(
     rows.map((row) => row.id),
     plan.measuresAtVisits,
   );
+  const today = todayByZone(scope.now);
   return rows.map((row) => {
     const cord = buildCord(
       { state: row.state, stateDate: row.state_date, baselineDate: row.baseline_date },
       plan.planned,
       visits.get(row.id) ?? [],
-      dayInZone(scope.now, row.time_zone),
+      today(row.time_zone),
       plan.closingDays,
     );
     return {
@@ -176,4 +177,14 @@ async function withCords(
       cord: cordView(cord),
     };
   });
+}
+
+/** Formatting a day in a zone is dear beside the rest of a row, and a study has few zones. */
+function todayByZone(now: Date): (zone: string) => string {
+  const days = new Map<string, string>();
+  return (zone) => {
+    const day = days.get(zone) ?? dayInZone(now, zone);
+    days.set(zone, day);
+    return day;
+  };
 }
