@@ -75,7 +75,8 @@ export const checkSchema = z.object({
   observed: z.array(residualsOfSubjectSchema),
   dealt: z.array(residualsOfSubjectSchema),
   advice: z.array(z.object({ fit: z.string(), why: z.string(), unless: z.string() })),
-  cautions: z.array(z.object({ code: z.string() })),
+  /** `count`: a straight line through counts. `censored`: readings beyond a limit are left out. */
+  cautions: z.array(z.object({ code: z.enum(['count', 'censored']) })),
   /** Whether an ordinary straight line is locked for this person, and what opened it. */
   lock: z.object({ locked: z.boolean(), acknowledgement: acknowledgementSchema.nullable() }),
 });

@@ -124,7 +124,7 @@ describe('counts and readings', () => {
       noGroup: 0,
     });
     expect(answer.body.cut.pending).toBe(7);
-    expect(answer.body.cautions).toEqual([{ code: 'censored_left_out' }]);
+    expect(answer.body.cautions).toEqual([{ code: 'censored' }]);
     const pending = (await app.get('owner', `/cuts/${cut}`)).body.pendingRows;
     expect(pending).toHaveLength(7);
     expect(pending[0]).toEqual({

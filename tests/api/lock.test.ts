@@ -120,7 +120,7 @@ describe('the check comes before the fit', () => {
     const answer = await app.post('analyst', `/cuts/${cut}/check`, {
       specification: { ...specification, measure: 'lapses' },
     });
-    expect(answer.body.cautions).toEqual([{ code: 'count_straight_line' }]);
+    expect(answer.body.cautions).toEqual([{ code: 'count' }]);
   });
 
   it.each([

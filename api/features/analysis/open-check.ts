@@ -84,13 +84,13 @@ function withIds(residuals: readonly OwnResiduals[], ids: ReadonlyMap<string, st
 }
 
 /** Codes; the pages have the sentences. */
-function cautionsOf(nature: string, counts: { censored: number }): { code: string }[] {
-  const cautions: { code: string }[] = [];
+function cautionsOf(nature: string, counts: { censored: number }): CheckAnswerBody['cautions'] {
+  const cautions: CheckAnswerBody['cautions'] = [];
   if (nature === 'count') {
-    cautions.push({ code: 'count_straight_line' });
+    cautions.push({ code: 'count' });
   }
   if (counts.censored > 0) {
-    cautions.push({ code: 'censored_left_out' });
+    cautions.push({ code: 'censored' });
   }
   return cautions;
 }
