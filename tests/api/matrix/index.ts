@@ -2,6 +2,7 @@
 import { accountRows } from './accounts.ts';
 import { analysisRows } from './analysis.ts';
 import { cutRows } from './cuts.ts';
+import { importRows } from './imports.ts';
 import { jobRows } from './jobs.ts';
 import { memberRows } from './members.ts';
 import { recordRows } from './records.ts';
@@ -15,6 +16,7 @@ export const matrix: MatrixRow[] = [
   ...memberRows,
   ...subjectRows,
   ...jobRows,
+  ...importRows,
   ...cutRows,
   ...analysisRows,
   ...recordRows,

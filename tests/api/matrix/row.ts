@@ -1,21 +1,9 @@
 /** One line of the table of routes: who may, a valid request, and the rows that tell what it did. */
 import type { StudyRole } from '../../../api/contracts/common.ts';
+import type { Who } from './who.ts';
 import type { World } from './world.ts';
 
-/** Everybody a route is tried by. A stranger holds every compatible duty, in another study. */
-export const everybody = [
-  'owner',
-  'coordinator',
-  'monitor',
-  'analyst',
-  'unblinded statistician',
-  'board member',
-  'safety officer',
-  'administrator',
-  'stranger',
-  'anonymous',
-] as const;
-export type Who = (typeof everybody)[number];
+export type { Who } from './who.ts';
 
 export interface MatrixRequest {
   /** Address with its ids filled in; whoever tries it sends the same one. */

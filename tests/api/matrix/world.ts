@@ -6,7 +6,7 @@ import { setupFileSchema } from '../../../api/contracts/setup.ts';
 import { createStudyFromSetup } from '../../../api/features/setup/service.ts';
 import { startTestApp, type TestApp } from '../../support/test-app.ts';
 import { giveRole, makePerson, PASSWORD, type TestPerson } from '../people.ts';
-import type { Who } from './row.ts';
+import type { Who } from './who.ts';
 
 export interface WorldStudy {
   id: string;
