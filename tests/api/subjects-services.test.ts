@@ -94,6 +94,12 @@ describe('enrolling', () => {
     ).rejects.toMatchObject(refused('subject_code_taken', { subject: code }));
   });
 
+  it('lets one of two who take a code at once through', async () => {
+    const results = await Promise.allSettled([enrol(), enrol()]);
+    const lost = results.filter((result) => result.status === 'rejected');
+    expect(lost.map((result) => result.reason.code)).toEqual(['subject_code_taken']);
+  });
+
   it('takes the day from the wall of the site', async () => {
     // At noon UTC on 1 December it is already 2 December in Auckland.
     const subject = await study.act('owner', (act) =>

@@ -32,25 +32,31 @@ export async function enrolSubject(act: StudyAct, input: EnrolSubjectInput): Pro
   const enrolmentDate = enrolled ? (input.enrolmentDate ?? today) : null;
   checkDates(today, { ...input, enrolmentDate });
 
-  const taken = await manager
-    .getRepository(Subject)
-    .existsBy({ studyId: act.study.id, code: input.code });
-  if (taken) {
+  // The unique key decides, also between two who enrol at the same moment.
+  const inserted: { id: string }[] = await manager.query(
+    `INSERT INTO subject (study_id, site_id, code, consent_version, consent_date, enrolment_date,
+                          baseline_date, state, state_date, created_at, created_by)
+     VALUES ($1, $2, $3, $4, $5, $6, $7, $8, $9, $10, $11)
+     ON CONFLICT (study_id, code) DO NOTHING RETURNING id`,
+    [
+      act.study.id,
+      site.id,
+      input.code,
+      input.consentVersion,
+      input.consentDate,
+      enrolmentDate,
+      input.baselineDate,
+      input.state,
+      enrolmentDate ?? today,
+      act.now,
+      act.accountId,
+    ],
+  );
+  const id = inserted[0]?.id;
+  if (id === undefined) {
     throw new Problem('subject_code_taken', { subject: input.code });
   }
-  const subject = await manager.getRepository(Subject).save({
-    studyId: act.study.id,
-    siteId: site.id,
-    code: input.code,
-    consentVersion: input.consentVersion,
-    consentDate: input.consentDate,
-    enrolmentDate,
-    baselineDate: input.baselineDate,
-    state: input.state,
-    stateDate: enrolmentDate ?? today,
-    createdAt: act.now,
-    createdBy: act.accountId,
-  });
+  const subject = await manager.getRepository(Subject).findOneByOrFail({ id });
   act.tx.audit({
     at: act.now,
     studyUid: act.study.uid,
@@ -67,7 +73,7 @@ export async function enrolSubject(act: StudyAct, input: EnrolSubjectInput): Pro
       baselineDate: subject.baselineDate,
     },
   });
-  return manager.getRepository(Subject).findOneByOrFail({ id: subject.id });
+  return subject;
 }
 
 function checkDates(
