@@ -3,12 +3,8 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { differenceOfCuts } from '../../api/analysis-threads/difference.ts';
 import { CanonicalCsvWriter, columnOrder } from '../../api/features/cuts/canonical-csv.ts';
-import {
-  type CutPlan,
-  type ReadingOfCut,
-  rowsOfSubject,
-  type SubjectOfCut,
-} from '../../api/features/cuts/cut-rows.ts';
+import { rowsOfSubject } from '../../api/features/cuts/cut-rows.ts';
+import type { CutPlan, ReadingOfCut, SubjectOfCut } from '../../api/features/cuts/cut-shapes.ts';
 import { addDays, daysBetween, isCalendarDay } from '../../api/features/cuts/days.ts';
 import { numberText } from '../../api/features/cuts/number-text.ts';
 

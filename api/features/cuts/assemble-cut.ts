@@ -3,13 +3,8 @@ import type { EntityManager } from 'typeorm';
 import type { CutExclusion } from '../../contracts/cuts.ts';
 import { endOfFollowUp } from '../subjects/state-steps.ts';
 import { CanonicalCsvWriter } from './canonical-csv.ts';
-import {
-  type CutPlan,
-  type LateReading,
-  type PendingVisit,
-  rowsOfSubject,
-  type SubjectOfCut,
-} from './cut-rows.ts';
+import { rowsOfSubject } from './cut-rows.ts';
+import type { CutPlan, LateReading, PendingVisit, SubjectOfCut } from './cut-shapes.ts';
 import { daysBetween } from './days.ts';
 import { forEachSubject } from './read-snapshot.ts';
 

@@ -1,6 +1,6 @@
 /** The bytes of a cut: the canonical CSV that its hash is taken of and that the engine reads. */
 import { createHash } from 'node:crypto';
-import type { CutRow } from './cut-rows.ts';
+import type { CutRow } from './cut-shapes.ts';
 import { numberText } from './number-text.ts';
 
 /** Bytes are kept in pieces of about this size, so that no single row of the database grows large. */

@@ -8,7 +8,7 @@ import type {
   cutMeasureSchema,
 } from '../../contracts/cuts.ts';
 import type { EndedSubject } from './assemble-cut.ts';
-import type { LateReading, PendingVisit } from './cut-rows.ts';
+import type { LateReading, PendingVisit } from './cut-shapes.ts';
 
 export type CutMeasure = z.infer<typeof cutMeasureSchema>;
 

@@ -1,6 +1,6 @@
 /** What the database holds of a study's subjects at one moment, subject by subject. */
 import type { EntityManager } from 'typeorm';
-import type { ReadingOfCut, SubjectOfCut, VisitOfCut } from './cut-rows.ts';
+import type { ReadingOfCut, SubjectOfCut, VisitOfCut } from './cut-shapes.ts';
 
 const SUBJECTS_PER_FETCH = 200;
 

@@ -1,7 +1,7 @@
 /** What of the study's set-up a cut depends on. */
 import type { EntityManager } from 'typeorm';
 import type { CutMeasure } from './cut-repository.ts';
-import type { PlannedVisitOfCut } from './cut-rows.ts';
+import type { PlannedVisitOfCut } from './cut-shapes.ts';
 import { dayInZone } from './days.ts';
 
 export interface StudyPlan {
