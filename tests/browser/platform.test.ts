@@ -36,23 +36,11 @@ describe('the built pages over the demo', () => {
     },
   );
 
-  it('let a person in through the form', async () => {
-    const { email, password } = demoPeople[0]!;
-    const { page, context } = await browser.open(running.address);
-    await page.goto('/sign-in');
-    await page.locator('input[type=email]').fill(email);
-    await page.locator('input[type=password]').fill(password);
-    await page.keyboard.press('Enter');
-    await page.waitForURL((url) => url.pathname !== '/sign-in');
-    await context.close();
-  });
-
   it.each(demoPeople.map((person) => person.role))(
     'open for the %s without a fault',
     async (role) => {
       const visitor = await browser.open(running.address);
       await signInAs(visitor, role);
-      await visitor.page.goto('/');
       await visitor.page.getByRole('main').waitFor();
       await visitor.page.waitForLoadState('networkidle');
       expect(new URL(visitor.page.url()).pathname).not.toBe('/sign-in');
