@@ -61,10 +61,10 @@ export function Select(props: SelectProps) {
               key={choice.value}
               id={choice.value}
               textValue={choice.label}
-              className="flex cursor-default items-center gap-2 px-3 py-1.5 outline-none data-[focused]:bg-kelp/15 data-[selected]:font-semibold"
+              className="flex cursor-default items-center px-3 py-1.5 outline-none data-[focused]:bg-kelp/15 data-[selected]:font-semibold"
             >
               <span>{choice.label}</span>
-              {choice.note ? <span className="text-13 text-faded">{choice.note}</span> : null}
+              {choice.note ? <span className="ml-2 text-13 text-faded">{choice.note}</span> : null}
             </ListBoxItem>
           ))}
         </ListBox>

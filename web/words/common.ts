@@ -32,7 +32,7 @@ export const topBarWords = {
   find: 'Find',
   finding: 'Looking for the subject.',
   notFound: (code: string) => `No subject ${code} that you may see.`,
-  found: (count: number) => `${counted(count, 'subject', 'subjects')} found. Arrow down to choose.`,
+
   administrator: 'administrator of this installation',
   caution:
     'Tetherline is not a medical device. Urgent findings go by the protocol’s own reporting line.',

@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query';
-import { useEffect, useId, useState } from 'react';
+import { useEffect, useState } from 'react';
 import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components';
 import { useNavigate } from 'react-router-dom';
 import { foundSubjectsSchema } from '../../../api/contracts/subjects.ts';
@@ -14,7 +14,6 @@ export function FindSubject({ study }: { study: string }) {
   const [typed, setTyped] = useState('');
   const [code, setCode] = useState('');
   const navigate = useNavigate();
-  const statusId = useId();
 
   useEffect(() => {
     const timer = setTimeout(() => setCode(typed.trim()), WAIT_MS);
@@ -28,66 +27,57 @@ export function FindSubject({ study }: { study: string }) {
     enabled: code !== '',
   });
   const rows = code === '' ? [] : (found.data?.rows ?? []);
-  const nothing = code !== '' && found.isSuccess && rows.length === 0;
-
   return (
-    <div className="relative">
-      <ComboBox
-        items={rows}
-        inputValue={typed}
-        onInputChange={setTyped}
-        value={null}
-        onChange={(key) => {
-          if (key === null) return;
+    <ComboBox
+      items={rows}
+      inputValue={typed}
+      onInputChange={setTyped}
+      value={null}
+      onChange={(key) => {
+        if (key === null) return;
+        setTyped('');
+        void navigate(paths.subject(study, String(key)));
+      }}
+      allowsEmptyCollection
+      menuTrigger="input"
+    >
+      <Label className="sr-only">{words.topBar.findSubjectLabel}</Label>
+      <Input
+        className="control figure w-[16ch] max-w-full placeholder:font-sans wide:w-[22ch]"
+        placeholder={words.topBar.findSubject}
+        onKeyDown={(event) => {
+          // Enter on a code typed in full opens it without a look at the list.
+          const exact = rows.find((row) => row.code.toLowerCase() === typed.trim().toLowerCase());
+          if (event.key !== 'Enter' || !exact) return;
+          event.preventDefault();
           setTyped('');
-          void navigate(paths.subject(study, String(key)));
+          void navigate(paths.subject(study, exact.id));
         }}
-        allowsEmptyCollection={false}
-        menuTrigger="input"
+      />
+      <Popover
+        offset={4}
+        className="max-h-80 min-w-(--trigger-width) overflow-auto rounded-3 border border-edge bg-panel text-15 text-ink"
       >
-        <Label className="sr-only">{words.topBar.findSubjectLabel}</Label>
-        <Input
-          className="control figure w-[16ch] max-w-full placeholder:font-sans wide:w-[22ch]"
-          placeholder={words.topBar.findSubject}
-          aria-describedby={statusId}
-          onKeyDown={(event) => {
-            // Enter on a code typed in full opens it without a look at the list.
-            const exact = rows.find((row) => row.code.toLowerCase() === typed.trim().toLowerCase());
-            if (event.key !== 'Enter' || !exact) return;
-            event.preventDefault();
-            setTyped('');
-            void navigate(paths.subject(study, exact.id));
-          }}
-        />
-        <Popover
-          offset={4}
-          className="max-h-80 min-w-(--trigger-width) overflow-auto rounded-3 border border-edge bg-panel text-15 text-ink"
+        <ListBox<(typeof rows)[number]>
+          className="py-1 outline-none"
+          renderEmptyState={() => (
+            <p className="px-3 py-1.5 text-13">
+              {code === '' || !found.isSuccess ? words.topBar.finding : words.topBar.notFound(code)}
+            </p>
+          )}
         >
-          <ListBox<(typeof rows)[number]> className="py-1 outline-none">
-            {(row) => (
-              <ListBoxItem
-                id={row.id}
-                textValue={row.code}
-                className="target flex cursor-pointer items-baseline gap-3 px-3 py-1.5 outline-none data-[focused]:bg-kelp/15"
-              >
-                <span className="figure">{row.code}</span>
-                <span className="text-13 text-faded">{row.site.name}</span>
-              </ListBoxItem>
-            )}
-          </ListBox>
-        </Popover>
-      </ComboBox>
-      <p
-        id={statusId}
-        role="status"
-        className={
-          nothing
-            ? 'absolute top-full right-0 z-10 border border-edge bg-panel px-3 py-1.5 text-13 whitespace-nowrap'
-            : 'sr-only'
-        }
-      >
-        {nothing ? words.topBar.notFound(code) : null}
-      </p>
-    </div>
+          {(row) => (
+            <ListBoxItem
+              id={row.id}
+              textValue={row.code}
+              className="target flex cursor-pointer items-baseline gap-3 px-3 py-1.5 outline-none data-[focused]:bg-kelp/15"
+            >
+              <span className="figure">{row.code}</span>
+              <span className="text-13 text-faded">{row.site.name}</span>
+            </ListBoxItem>
+          )}
+        </ListBox>
+      </Popover>
+    </ComboBox>
   );
 }
