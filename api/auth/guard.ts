@@ -54,7 +54,7 @@ function accessStrategy({ databases, secrets, clock }: GuardDeps): Strategy {
         if (found === null) done(null, false, new Problem('not_signed_in'));
         else if (typeof found === 'string') {
           done(null, false, new Problem('session_ended', { why: found }));
-        } else done(null, found);
+        } else done(null, { ...found, accessExpiresAt: new Date(claims.exp * 1_000) });
       }, done);
     },
   );

@@ -110,7 +110,7 @@ export async function personOfSession(
   db: DataSource,
   sessionUid: string,
   now: Date,
-): Promise<SignedInPerson | SessionEnd | null> {
+): Promise<Omit<SignedInPerson, 'accessExpiresAt'> | SessionEnd | null> {
   const rows: PersonRow[] = await db.query(
     `SELECT a.id AS account_id, a.uid AS account_uid, a.email, a.name, a.administrator,
             a.must_change_password, a.disabled_at, s.id AS session_id, s.uid AS session_uid,

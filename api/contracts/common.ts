@@ -25,7 +25,7 @@ export const daySchema = z.iso.date();
 
 /** One page of a list. */
 export const pageQuerySchema = z.object({
-  page: z.coerce.number().int().min(1).default(1),
+  page: z.coerce.number().int().min(1).max(1_000_000).default(1),
   pageSize: z.coerce.number().int().min(1).max(200).default(50),
 });
 export const directionSchema = z.enum(['asc', 'desc']);

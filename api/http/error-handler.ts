@@ -23,6 +23,10 @@ export function asProblem(error: unknown): Problem {
   if (PASSING_STATES.has(foreign.driverError?.code ?? foreign.code ?? '')) {
     return new Problem('busy', {}, { cause: error, retryAfter: 1 });
   }
+  // Class 22 is a value that a column can't hold, such as a number past its range: it came with the request.
+  if (foreign.driverError?.code?.startsWith('22')) {
+    return new Problem('malformed_request', {}, { cause: error });
+  }
   const status = foreign.status ?? 500;
   if (status >= 400 && status < 500) return new Problem('malformed_request', {}, { cause: error });
   return new Problem('failed', {}, { cause: error });

@@ -15,6 +15,8 @@ export interface SignedInPerson {
   sessionCreatedAt: Date;
   lastSeenAt: Date;
   absoluteExpiresAt: Date;
+  /** When the token of this request runs out. */
+  accessExpiresAt: Date;
 }
 
 interface Facts {

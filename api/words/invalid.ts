@@ -1,6 +1,8 @@
 /** A sentence for an entry that breaks its contract; a sentence written in the contract itself wins. */
 import type { z } from 'zod';
 
+export const NUL_SENTENCE = 'This holds a NUL character. Take it out.';
+
 type Issue = z.core.$ZodRawIssue;
 
 export function sentenceOfIssue(issue: Issue): string {

@@ -17,7 +17,8 @@ beforeAll(async () => {
 afterAll(() => app.close());
 beforeEach(async () => {
   // A window of its own for every test, and a person nobody has tried yet.
-  app.clock.advance(24 * 60 * MINUTE);
+  const day = 24 * 60 * MINUTE;
+  app.clock.now = new Date((Math.floor(app.clock.now.getTime() / day) + 1) * day);
   people += 1;
   mira = await makePerson(app.database, `Mira ${'x'.repeat(people)}`);
 });
@@ -110,6 +111,8 @@ describe('the door', () => {
       { path: 'timeZone', message: 'Choose a time zone of the list.' },
       { path: 'version', message: 'Fill this in.' },
     ]);
+    const nul = await agent.patch('/api/me').send({ timeZone: 'UTC\u0000', version: 1 });
+    expect([nul.status, nul.body.errors[0].path]).toEqual([422, 'timeZone']);
     const large = await agent.patch('/api/me').send({ theme: 'x'.repeat(2_000_000) });
     expect([large.status, large.body.code]).toEqual([413, 'body_too_large']);
   });
@@ -136,6 +139,11 @@ describe('signing in', () => {
       mustChangePassword: false,
     });
     expect(JSON.stringify(answer.body)).not.toContain('tether');
+    const agent = await app.signedIn(mira.email, PASSWORD);
+    const ends = app.clock.now.getTime() + 5 * MINUTE;
+    app.clock.advance(MINUTE);
+    const me = await agent.get('/api/me').expect(200);
+    expect(me.body.session.accessExpiresAt).toBe(new Date(ends).toISOString());
   });
 
   it('answers an unknown address, a wrong password and a closed account in the same words', async () => {

@@ -7,7 +7,6 @@ import { confirmPassword } from '../../auth/confirm-password.ts';
 import { hashPassword, refuseWeakPassword } from '../../auth/passwords.ts';
 import { IDLE_MINUTES, limitsView } from '../../auth/session-limits.ts';
 import { revokeSessions } from '../../auth/sessions.ts';
-import { ACCESS_MINUTES } from '../../auth/tokens.ts';
 import type {
   ChangeMeRequest,
   ChangePasswordRequest,
@@ -23,9 +22,6 @@ import { administratorPlaces } from './places.ts';
 export async function me(deps: AppDeps, person: SignedInPerson): Promise<Me> {
   const db = deps.databases.masked;
   const account = await db.getRepository(Account).findOneByOrFail({ id: person.accountId });
-  const accessEnds = new Date(
-    Math.min(deps.clock().getTime() + ACCESS_MINUTES * 60_000, person.absoluteExpiresAt.getTime()),
-  );
   return {
     account: {
       id: account.uid,
@@ -37,7 +33,10 @@ export async function me(deps: AppDeps, person: SignedInPerson): Promise<Me> {
       timeZone: account.timeZone,
       version: account.version,
     },
-    session: { ...limitsView(accessEnds, person.absoluteExpiresAt), id: person.sessionUid },
+    session: {
+      ...limitsView(person.accessExpiresAt, person.absoluteExpiresAt),
+      id: person.sessionUid,
+    },
     memberships: account.administrator ? [] : await membershipsOf(db, account.id),
     places: account.administrator ? [...administratorPlaces] : [],
   };
