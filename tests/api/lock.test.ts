@@ -224,6 +224,14 @@ describe('the lock on the ordinary fit', () => {
       expect(text).not.toContain('"seOrdinary"');
     }
     expect(JSON.parse(file.text)).not.toHaveProperty('stamp');
+    const check = await app.post('second', `/cuts/${cut}/check`, { specification });
+    const trail = await database.query<{ body: string }>(
+      `SELECT body FROM audit.entry WHERE action <> 'study set up'`,
+    );
+    // The allocation is loaded and sealed; nothing that a masked person reads, or the trail, knows it.
+    for (const text of [answer.text, file.text, check.text, ...trail.map((row) => row.body)]) {
+      expect(ARMS.some((arm) => text.includes(arm))).toBe(false);
+    }
   });
 
   it('cannot be taken back or written around at the database', async () => {

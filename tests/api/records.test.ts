@@ -1,4 +1,10 @@
+import { execFile } from 'node:child_process';
 import { createHash } from 'node:crypto';
+import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { promisify } from 'node:util';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { canonicalJson } from '../../api/analysis-threads/canonical-json.ts';
 import type { TestDatabase } from '../support/test-database.ts';
@@ -86,6 +92,26 @@ describe('a record', () => {
     );
     expect(texts).toHaveLength(2);
     expect(texts[0]).toEqual(texts[1]);
+  });
+
+  it('is repeated byte by byte by the command, from the downloaded cut', async () => {
+    const folder = mkdtempSync(join(tmpdir(), 'tetherline-cut-'));
+    try {
+      const path = join(folder, 'cut.csv');
+      writeFileSync(path, (await app.get('analyst', `/cuts/${cut}/file`)).text);
+      const columns = ['--subject', 'subject', '--time', 'day', '--response', 'reaction'];
+      const { stdout } = await promisify(execFile)(
+        process.execPath,
+        ['--import', 'tsx', 'api/cli/analyse.ts', path, ...columns],
+        { cwd: fileURLToPath(new URL('../..', import.meta.url)) },
+      );
+      const [row] = await database.query<{ result_text: string }>(
+        'SELECT result_text FROM analysis_record ORDER BY id LIMIT 1',
+      );
+      expect(canonicalJson(JSON.parse(stdout))).toBe(row?.result_text);
+    } finally {
+      rmSync(folder, { recursive: true, force: true });
+    }
   });
 
   it('is a file whose content anybody can hash again', async () => {
