@@ -2,7 +2,6 @@ import { describe, expect, it } from 'vitest';
 import { toCsv } from '../../web/components/csv.ts';
 import { compareCells } from '../../web/components/data-table/column.ts';
 import { dayOf, formatDay, formatMoment } from '../../web/components/dates.ts';
-import { readNumber } from '../../web/components/number-field.tsx';
 import {
   counted,
   decimalsForError,
@@ -71,14 +70,6 @@ describe('numbers', () => {
     expect(formatShare(0.126)).toBe('13\u00a0%');
     expect(counted(1, 'subject', 'subjects')).toBe('1 subject');
     expect(counted(12000, 'subject', 'subjects')).toBe('12\u2009000 subjects');
-  });
-
-  it('reads a typed number without guessing', () => {
-    expect(readNumber(' 12,5 ')).toBe(12.5);
-    expect(readNumber('\u22123.2')).toBe(-3.2);
-    expect(readNumber('1.2.3')).toBeNull();
-    expect(readNumber('12 cm')).toBeNull();
-    expect(readNumber('')).toBeNull();
   });
 });
 

@@ -6,10 +6,6 @@ import { api } from './api.ts';
 const ENDED: ReadonlySet<JobView['state']> = new Set(['done', 'failed', 'cancelled']);
 const AGAIN_AFTER_MS = 2_000;
 
-export function cancelJob(id: string): Promise<void> {
-  return api(`/api/jobs/${id}/cancel`, { method: 'POST' });
-}
-
 /**
  * Follows a job over server-sent events. When the stream breaks, the job is read in the usual way,
  * which also renews the sign-in, and the stream is opened again.

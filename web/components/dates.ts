@@ -15,11 +15,6 @@ const MONTHS = [
 ] as const;
 const NONE = '\u2014';
 
-/** The zone of this device, for a person who has chosen none. */
-export function deviceZone(): string {
-  return Intl.DateTimeFormat().resolvedOptions().timeZone;
-}
-
 /**
  * A calendar day, `YYYY-MM-DD`, or a part of one: `YYYY-MM` and `YYYY` stay as partial as they are.
  * A day has no zone, so no clock takes part here.

@@ -100,7 +100,7 @@ export function Form<Values extends FieldValues, Output>(props: FormProps<Values
                     className="target inline-flex items-center text-stop"
                     onClick={(event) => {
                       event.preventDefault();
-                      form.setFocus(path as FieldPath<Values>);
+                      focusField(form, path as FieldPath<Values>, event.currentTarget);
                     }}
                   >
                     {labelFor(props.labels, path)}: {text}
@@ -114,6 +114,20 @@ export function Form<Values extends FieldValues, Output>(props: FormProps<Values
       {props.children}
     </form>
   );
+}
+
+/** Fields of several controls, such as a group of boxes, are found by their name. */
+function focusField<Values extends FieldValues, Output>(
+  form: UseFormReturn<Values, unknown, Output>,
+  path: FieldPath<Values>,
+  link: HTMLElement,
+): void {
+  form.setFocus(path);
+  if (document.activeElement !== link) return;
+  link
+    .closest('form')
+    ?.querySelector<HTMLElement>(`[name="${CSS.escape(path)}"]`)
+    ?.focus();
 }
 
 function labelFor(labels: Readonly<Record<string, string | undefined>>, path: string): string {
