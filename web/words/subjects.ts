@@ -15,6 +15,7 @@ export const subjectsWords = {
   doneOfDue: 'Done / due',
   lastVisit: 'Last visit',
   followUp: 'Follow-up',
+  sinceBaseline: { weeks: 'weeks since baseline', days: 'days since baseline' },
   text: 'Code holds',
   empty: 'No subject is enrolled at your sites yet.',
   emptyImport: 'Import readings',

@@ -5,11 +5,16 @@ import { placeOf } from './geometry.ts';
 import type { CordScale } from './types.ts';
 
 /** Follow-up over eight weeks is read in weeks. */
+export function cordUnit(scale: CordScale): 'weeks' | 'days' {
+  return scale.to - scale.from > 56 ? 'weeks' : 'days';
+}
+
 function ticksOf(scale: CordScale): {
   unit: 'weeks' | 'days';
   ticks: { at: number; text: string }[];
 } {
-  const weeks = scale.to - scale.from > 56;
+  const unit = cordUnit(scale);
+  const weeks = unit === 'weeks';
   const length = weeks ? 7 : 1;
   const steps = weeks ? [1, 2, 4, 6, 12, 26, 52, 104] : [1, 2, 7, 14];
   const width = (scale.to - scale.from) / length;
@@ -18,7 +23,7 @@ function ticksOf(scale: CordScale): {
   const ticks: { at: number; text: string }[] = [];
   for (let at = first; at <= scale.to / length + 1e-9; at += step)
     ticks.push({ at: at * length, text: formatNumber(at) });
-  return { unit: weeks ? 'weeks' : 'days', ticks };
+  return { unit, ticks };
 }
 
 export function CordAxis({ scale, named = true }: { scale: CordScale; named?: boolean }) {

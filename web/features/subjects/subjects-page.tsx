@@ -10,7 +10,7 @@ import { listQuery } from '../../app/list.ts';
 import { paths } from '../../app/paths.ts';
 import { sentenceOf } from '../../app/problem.ts';
 import { useStudy } from '../../app/session.ts';
-import { CordAxis } from '../../charts/cord/cord-axis.tsx';
+import { CordAxis, cordUnit } from '../../charts/cord/cord-axis.tsx';
 import { CordLegend } from '../../charts/cord/cord-legend.tsx';
 import type { CordScale } from '../../charts/cord/types.ts';
 import { ButtonLink } from '../../components/button.tsx';
@@ -47,6 +47,7 @@ function columnsOf(study: string, scale: CordScale): Column<SubjectRow>[] {
     {
       id: 'cord',
       heading: text.followUp,
+      unit: text.sinceBaseline[cordUnit(scale)],
       headingExtra: <CordAxis scale={scale} named={false} />,
       value: () => null,
       cell: (row) => <SubjectCord cord={row.cord} scale={scale} />,
