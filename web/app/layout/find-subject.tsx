@@ -2,7 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
 import { ComboBox, Input, Label, ListBox, ListBoxItem, Popover } from 'react-aria-components';
 import { useNavigate } from 'react-router-dom';
-import { foundSubjectsSchema } from '../../../api/contracts/subjects.ts';
+import { type FoundSubjects, foundSubjectsSchema } from '../../../api/contracts/subjects.ts';
 import { words } from '../../words/en.ts';
 import { api } from '../api.ts';
 import { paths } from '../paths.ts';
@@ -58,7 +58,7 @@ export function FindSubject({ study }: { study: string }) {
         offset={4}
         className="max-h-80 min-w-(--trigger-width) overflow-auto rounded-3 border border-edge bg-panel text-15 text-ink"
       >
-        <ListBox<(typeof rows)[number]>
+        <ListBox<FoundSubjects['rows'][number]>
           className="py-1 outline-none"
           renderEmptyState={() => (
             <p className="px-3 py-1.5 text-13">
