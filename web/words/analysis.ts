@@ -46,7 +46,7 @@ export const analysisWords = {
   stamp: 'independence not met',
   fits: { pooled: 'Pooled line, cluster-robust errors', ordinary: 'Ordinary straight line' },
   purposes: { planned: 'planned', exploratory: 'exploratory' },
-  axes: { since_baseline: 'Days since baseline', planned_day: 'Planned day of the visit' },
+  axes: { since_baseline: 'Since baseline', planned_day: 'As planned' },
   axisLabel: 'Time axis',
   units: { days: 'days', weeks: 'weeks' },
   unitLabel: 'Unit of time',

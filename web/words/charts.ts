@@ -86,8 +86,8 @@ export const chartsWords = {
     pick: 'Picked subject; arrow keys move between subjects, a typed code picks it, Esc clears',
     nonePicked: 'none picked',
     n: 'n',
-    yName: (measure: string, unit: string | null, from: string | null) =>
-      `${measure}${unit ? `, ${unit}` : ''}${from === null ? '' : `; axis begins at ${from}`}`,
+    yName: (measure: string, unit: string | null, fromZero: boolean) =>
+      `${measure}${unit ? `, ${unit}` : ''}${fromZero ? '' : '; the axis does not begin at 0'}`,
     ended: (count: number) =>
       `follow-up ended early, at the last reading (${counted(count, 'subject', 'subjects')})`,
     few: 'the pooled line fades where fewer than five subjects remain',

@@ -34,7 +34,9 @@ export const checkWords = {
   single: (count: number, of: number) =>
     `${readings(count)} of ${subjects(of)}: no subject repeats`,
   comeFrom: (of: number, repeating: number) =>
-    `They come from ${subjects(of)}, and ${formatCount(repeating)} of them ${repeating === 1 ? 'has' : 'have'} two or more.`,
+    repeating === of
+      ? `They come from ${subjects(of)}, each with two or more.`
+      : `They come from ${subjects(of)}, and ${formatCount(repeating)} of them ${repeating === 1 ? 'has' : 'have'} two or more.`,
   carry: 'For the mean they carry about as much as ',
   independentReadings: (count: number) => `${formatCount(count)} independent readings`,
   icc: (of: Interval) => ` (intraclass correlation ${interval(of)}).`,
@@ -78,7 +80,7 @@ export const checkWords = {
     quantity: 'Quantity',
     value: 'Value',
     interval: '95 % interval',
-    says: 'What it says',
+    intervalOf: (lower: string, upper: string) => `${lower} to ${upper}`,
     icc: 'Intraclass correlation of the residuals',
     iccSays: 'Share of the spread that lies between subjects, once the line is taken away.',
     iccNegative:
@@ -107,7 +109,7 @@ export const checkWords = {
       : 'As observed: residuals by subject',
   observedText: (measure: string, of: number, within: string, unit: string) =>
     `Residuals of ${inSentence(measure)} around the ordinary line, one column for each of ${subjects(of)}. The middle column spans ${within} ${unit}.`,
-  dealtTitle: 'The dealt twin: the same residuals dealt to subjects at random',
+  dealtTitle: 'The dealt twin: the same residuals dealt at random',
   dealtText: (within: string, unit: string) =>
     `The same residuals on the same scale. Without dependence, columns would look like these: the middle one spans ${within} ${unit}.`,
 
@@ -133,8 +135,8 @@ export const checkWords = {
       worst === null
         ? 'What an ordinary straight line would get wrong'
         : worst.ratio > 1
-          ? `Ordinary errors are ${worst.times} times too small for: ${inSentence(worst.name)}`
-          : `Ordinary errors are ${worst.times} times too large for: ${inSentence(worst.name)}`,
+          ? `Ordinary errors are ${worst.times} times too small for the ${inSentence(worst.name)}`
+          : `Ordinary errors are ${worst.times} times too large for the ${inSentence(worst.name)}`,
     text: (parts: readonly string[]) => `Robust ÷ ordinary error: ${parts.join('; ')}.`,
     part: (name: string, ratio: number | null) => `${inSentence(name)} ${formatRatio(ratio)}`,
     df: (df: number | null) => `${formatDf(df)} df`,
@@ -149,10 +151,11 @@ export const checkWords = {
     exchangeable_and_serial:
       'Type: a stable level for each subject, with a part that fades with time',
   } satisfies Record<Verdict, string>,
+  typeNotJudged: 'Type: alike within subject',
   notJudged:
     'Whether the likeness fades with time is not judged by a fit here; see the pictures of time apart and of successive residuals.',
   serialCaution: 'Slopes that differ between subjects look alike.',
-  variogramTitle: 'Two readings of one subject, by the time between them',
+  variogramTitle: 'Two readings of one subject, by time apart',
   variogramText: (first: string, last: string, total: string, unit: string) =>
     `Half the squared difference of two residuals of one subject is ${first} at the shortest time apart and ${last} at the longest; between subjects it is ${total} ${unit}.`,
   variogramMissing: 'The variogram needs pairs of readings of one subject at different times.',

@@ -1,5 +1,5 @@
 /** Words of analysis records and the pictures in them. */
-import { inSentence } from './analysis.ts';
+import { atStart, inSentence } from './analysis.ts';
 import {
   counted,
   decimalsForError,
@@ -68,6 +68,9 @@ export const recordsWords = {
     `No clear difference in the trend of ${inSentence(measure)} between ${second} and ${reference}: from ${size(of.lower ?? 0, of)} ${unit} lower to ${size(of.upper ?? 0, of)} higher`,
   under: (subjects: number, readings: number, cut: number, day: string) =>
     `${counted(subjects, 'subject', 'subjects')}, ${counted(readings, 'reading', 'readings')}, cut ${cut} of visits to ${day}.`,
+
+  asked: (purpose: string, number: number, measure: string) =>
+    `${atStart(purpose)}; specification ${number} of ${inSentence(measure)} on this cut.`,
 
   lineName: { pooled: 'pooled line', ordinary: 'ordinary straight line' },
   pictureTitle: (measure: string, time: string, grouped: boolean) =>

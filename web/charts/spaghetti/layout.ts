@@ -20,8 +20,8 @@ export type Layout = {
   yTicks: Tick[];
   xTicks: Tick[];
   nTicks: Tick[];
-  /** The value at the foot of the axis where that is not zero. */
-  begins: string | null;
+  /** Whether zero lies on the axis; where it does not, the picture says so. */
+  holdsZero: boolean;
 };
 
 /** Points of a subject's path, or the ends of its own line over its own follow-up. */
@@ -79,7 +79,6 @@ export function layoutOf(data: SpaghettiData, size: Size, stamped: boolean): Lay
     at: visit.time,
     text: formatNumber(visit.time, Number.isInteger(visit.time) ? 0 : 1),
   }));
-  const begins = yDomain[0] > 0 ? (yTicks[0]?.text ?? null) : null;
   return {
     x,
     y,
@@ -91,7 +90,7 @@ export function layoutOf(data: SpaghettiData, size: Size, stamped: boolean): Lay
     yTicks,
     xTicks: timeTicks.length > 1 ? timeTicks : ticksFor([first, last], 6),
     nTicks: visits.map((visit) => ({ at: visit.time, text: formatCount(visit.n) })),
-    begins,
+    holdsZero: yDomain[0] <= 0 && yDomain[1] >= 0,
   };
 }
 

@@ -61,7 +61,7 @@ export function SpaghettiMarks(props: {
         y={layout.y}
         from={layout.left}
         to={layout.right}
-        name={words.yName(data.measure, data.unit, layout.begins)}
+        name={words.yName(data.measure, data.unit, layout.holdsZero)}
         nameAt={layout.nameAt}
       />
       {ribbons && <Ribbons points={ribbons} layout={layout} />}

@@ -1,5 +1,5 @@
 import type { CheckView } from '../../../api/contracts/analysis.ts';
-import { formatCount, formatInterval, formatRatio } from '../../components/numbers.ts';
+import { formatCount, formatRatio } from '../../components/numbers.ts';
 import { words } from '../../words/en.ts';
 import type { PartProps } from './check-report.tsx';
 
@@ -15,7 +15,9 @@ function reasonOf(block: Record<string, unknown>, name: string): string {
 }
 
 function intervalText(of: { lower: number | null; upper: number | null }): string {
-  return of.lower === null || of.upper === null ? NONE : formatInterval(of.lower, of.upper, 0.05);
+  return of.lower === null || of.upper === null
+    ? NONE
+    : text.intervalOf(formatRatio(of.lower), formatRatio(of.upper));
 }
 
 function rowsOf({ independence, structure }: CheckView): Row[] {

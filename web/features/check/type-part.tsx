@@ -21,7 +21,9 @@ export function TypePart({ check, source, picked }: PartProps) {
   const unit = measure.unit ? `(${measure.unit})²` : '';
   return (
     <Section
-      heading={text.typeHeadings[verdict]}
+      heading={
+        verdict === 'exchangeable' && !judged ? text.typeNotJudged : text.typeHeadings[verdict]
+      }
       sentence={
         verdict === 'serial' || verdict === 'exchangeable_and_serial'
           ? text.serialCaution

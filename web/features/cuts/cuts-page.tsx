@@ -9,8 +9,7 @@ import { ButtonLink } from '../../components/button.tsx';
 import type { Column, Filter } from '../../components/data-table/column.ts';
 import { DataTable } from '../../components/data-table/data-table.tsx';
 import { useTableState } from '../../components/data-table/table-state.ts';
-import { formatDay } from '../../components/dates.ts';
-import { Moment } from '../../components/moment.tsx';
+import { Day, Moment } from '../../components/moment.tsx';
 import { formatCount } from '../../components/numbers.ts';
 import { Page } from '../../components/page.tsx';
 import { Answer, Empty } from '../../components/states.tsx';
@@ -56,7 +55,7 @@ function columnsOf(study: string): Column<CutSummary>[] {
       id: 'visitCutoff',
       heading: text.columns.visitCutoff,
       value: (row) => row.visitCutoff,
-      cell: (row) => formatDay(row.visitCutoff),
+      cell: (row) => <Day on={row.visitCutoff} />,
       sortable: true,
     },
     count('subjects', false),
@@ -77,7 +76,12 @@ function columnsOf(study: string): Column<CutSummary>[] {
       cell: (row) => <Moment at={row.frozenAt} />,
       sortable: true,
     },
-    { id: 'frozenBy', heading: text.columns.frozenBy, value: (row) => row.frozenBy },
+    {
+      id: 'frozenBy',
+      heading: text.columns.frozenBy,
+      value: (row) => row.frozenBy,
+      cell: (row) => <span className="whitespace-nowrap">{row.frozenBy}</span>,
+    },
     {
       id: 'sha256',
       heading: text.columns.sha256,

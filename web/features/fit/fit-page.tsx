@@ -9,7 +9,7 @@ import { formatDay } from '../../components/dates.ts';
 import { Facts, Page, Section } from '../../components/page.tsx';
 import { Stamp } from '../../components/stamp.tsx';
 import { Answer, Empty } from '../../components/states.tsx';
-import { slopeUnit, timeNames } from '../../words/analysis.ts';
+import { timeNames } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { PurposeForm } from './purpose-form.tsx';
 
@@ -61,10 +61,7 @@ function Asked({ question, fit }: { question: Question; fit: Fit }) {
                     text.cut,
                     `${words.analysis.cutName(data.number, data.name)}, ${text.visitsTo(formatDay(data.visitCutoff))}`,
                   ],
-                  [
-                    text.measure,
-                    `${label}, ${slopeUnit(measure?.unit ?? null, specification.unit)}`,
-                  ],
+                  [text.measure, measure?.unit ? `${label}, ${measure.unit}` : label],
                   [text.time, timeNames[specification.axis][specification.unit]],
                   [text.group, specification.group ? text.compared(data.groups) : text.together],
                 ]}

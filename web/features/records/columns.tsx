@@ -33,12 +33,11 @@ export function columnsOf(study: string): Column<RecordSummary>[] {
       heading: names.measure,
       value: (row) => row.measure.label,
       sortable: true,
-      grow: true,
     },
     {
       id: 'cut',
       heading: names.cut,
-      value: (row) => words.analysis.cutName(row.cut.number, row.cut.name),
+      value: (row) => `${row.cut.number}, ${row.cut.name}`,
       sortable: true,
     },
     {
@@ -48,7 +47,13 @@ export function columnsOf(study: string): Column<RecordSummary>[] {
       numeric: true,
       sortable: true,
     },
-    { id: 'fit', heading: names.fit, value: (row) => fitNames[row.fit], sortable: true },
+    {
+      id: 'fit',
+      heading: names.fit,
+      value: (row) => fitNames[row.fit],
+      cell: (row) => <span className="whitespace-nowrap">{fitNames[row.fit]}</span>,
+      sortable: true,
+    },
     {
       id: 'purpose',
       heading: names.purpose,
@@ -60,12 +65,12 @@ export function columnsOf(study: string): Column<RecordSummary>[] {
       heading: names.trend,
       value: (row) => row.headline.estimate,
       cell: (row) => (
-        <>
-          {formatEstimate(row.headline.estimate, errorOf(row))}{' '}
+        <span className="inline-flex flex-col items-end py-1">
+          {formatEstimate(row.headline.estimate, errorOf(row))}
           <span className="font-sans text-13 text-faded">
             {slopeUnit(row.measure.unit, row.specification.unit)}
           </span>
-        </>
+        </span>
       ),
       numeric: true,
     },
@@ -86,7 +91,13 @@ export function columnsOf(study: string): Column<RecordSummary>[] {
         row.stamp ? <strong className="text-13 text-flare-ink">{row.stamp}</strong> : null,
       fixed: true,
     },
-    { id: 'by', heading: names.by, value: (row) => row.by, sortable: true },
+    {
+      id: 'by',
+      heading: names.by,
+      value: (row) => row.by,
+      cell: (row) => <span className="whitespace-nowrap">{row.by}</span>,
+      sortable: true,
+    },
     {
       id: 'signed',
       heading: names.signed,

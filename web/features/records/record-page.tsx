@@ -82,7 +82,12 @@ function Opened({ record }: { record: RecordDetail }) {
             record.cut.number,
             formatDay(record.cut.visitCutoff),
           )}{' '}
-          {errorsText(record, formatCount(counts.readings))}.
+          {errorsText(record, formatCount(counts.readings))}.{' '}
+          {text.asked(
+            words.analysis.purposes[record.purpose],
+            record.specification.number,
+            record.measure.label,
+          )}
         </>
       }
       aside={record.stamp ? <Stamp text={record.stamp} /> : undefined}

@@ -144,18 +144,21 @@ export function SubjectTable({ record, picked, onPick }: RecordPartProps) {
           )}
         </p>
       ) : null}
-      <DataTable
-        name={recordFile(record, 'own-lines')}
-        prefix="own."
-        caption={text.subjectsCaption}
-        noun={text.subjectsNoun}
-        columns={columns}
-        rows={rows}
-        rowId={(row) => row.id}
-        initialSort={BY_CODE}
-        picked={picked}
-        onPick={(id) => onPick(id === picked ? null : id)}
-      />
+      {/* Long lists scroll here, so that the record below stays in reach. */}
+      <div className={rows.length > 20 ? 'max-h-[600px] overflow-y-auto' : undefined}>
+        <DataTable
+          name={recordFile(record, 'own-lines')}
+          prefix="own."
+          caption={text.subjectsCaption}
+          noun={text.subjectsNoun}
+          columns={columns}
+          rows={rows}
+          rowId={(row) => row.id}
+          initialSort={BY_CODE}
+          picked={picked}
+          onPick={(id) => onPick(id === picked ? null : id)}
+        />
+      </div>
     </Section>
   );
 }
