@@ -143,6 +143,7 @@ export const importWords = {
   cancelWhat: 'Nothing is written, and the uploaded file is deleted.',
   cancelled: 'The import is cancelled.',
   toSubjects: 'Read the subjects',
+  aboutFile: 'About this file',
   hash: 'SHA-256 of the file',
 } as const;
 

@@ -50,7 +50,11 @@ async function guarded(
   try {
     await work();
   } catch (error) {
-    if (error instanceof Cancelled) return;
+    if (error instanceof Cancelled) {
+      // Stopped through its job: the import waits where it stood before the work began.
+      await leave(during === 'checking' ? 'uploaded' : 'checked', null);
+      return;
+    }
     if (error instanceof StudyChanged) {
       await leave('uploaded', { code: 'import_changed', params: {} });
     } else if (error instanceof FileProblem) {

@@ -78,9 +78,10 @@ function Shown({ study, view }: { study: string; view: ImportView }) {
           <ButtonLink to={paths.subjects(study)}>{text.toSubjects}</ButtonLink>
         </div>
       ) : null}
-      <Section heading={view.fileName}>
+      <Section heading={text.aboutFile}>
         <Facts
           facts={[
+            [text.name, view.fileName],
             [text.measure, view.measure.label],
             [text.state, text.states[view.state]],
             [text.hash, <Hash key="hash" value={view.fileSha256} />],
