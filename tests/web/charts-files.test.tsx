@@ -14,6 +14,7 @@ import { Sheet, sheetSize } from '../../web/charts/export/sheet.tsx';
 import { svgFile } from '../../web/charts/export/svg-file.ts';
 import { SpaghettiMarks } from '../../web/charts/spaghetti/marks.tsx';
 import { spaghettiTable } from '../../web/charts/spaghetti/table.ts';
+import { findChromium } from '../support/chromium.ts';
 import { pictureOf, six, stampWords } from './charts-data.ts';
 
 const inner = { width: 960, height: 520 };
@@ -147,7 +148,7 @@ describe('PNG', () => {
   it('is drawn with the stamp, in pixels and in words', async () => {
     const home = mkdtempSync(join(tmpdir(), 'charts-'));
     const browser = await chromium.launch({
-      executablePath: process.env.CHROMIUM ?? '/usr/bin/chromium',
+      executablePath: findChromium(),
       args: ['--no-sandbox', '--disable-gpu'],
       env: { ...process.env, HOME: home },
     });
@@ -156,32 +157,31 @@ describe('PNG', () => {
       const render = async (stamp: string | null) => {
         const { svg, picture } = pictureAs(stamp);
         const size = sheetSize(picture, inner);
-        const bytes = await page.evaluate(
-          `(${rasterise.toString()})(${JSON.stringify(svg)}, ${JSON.stringify(size)}).then((bytes) => [...bytes])`,
+        const text = await page.evaluate<string>(
+          `(${rasterise.toString()})(${JSON.stringify(svg)}, ${JSON.stringify(size)})
+            .then((bytes) => btoa(bytes.reduce((all, byte) => all + String.fromCharCode(byte), '')))`,
         );
-        return withPngText(Uint8Array.from(bytes as number[]), {
+        return withPngText(Uint8Array.from(Buffer.from(text, 'base64')), {
           Title: picture.title,
           Warning: stamp ?? '',
         });
       };
       const flarePixels = (png: Uint8Array) =>
-        page.evaluate(
-          async (bytes) => {
-            const image = await createImageBitmap(new Blob([Uint8Array.from(bytes)]));
-            const canvas = new OffscreenCanvas(image.width, image.height);
-            const pen = canvas.getContext('2d');
-            if (!pen) return -1;
-            pen.drawImage(image, 0, 0);
-            // The upper right quarter, where the stamp stands.
-            const x = Math.round(image.width / 2);
-            const { data } = pen.getImageData(x, 0, image.width - x, Math.round(image.height / 2));
-            let found = 0;
-            for (let at = 0; at < data.length; at += 4)
-              if (data[at] === 0x90 && data[at + 1] === 0x3a && data[at + 2] === 0x03) found += 1;
-            return found;
-          },
-          [...png],
-        );
+        page.evaluate(async (text) => {
+          const file = await fetch(`data:image/png;base64,${text}`);
+          const image = await createImageBitmap(await file.blob());
+          const canvas = new OffscreenCanvas(image.width, image.height);
+          const pen = canvas.getContext('2d');
+          if (!pen) return -1;
+          pen.drawImage(image, 0, 0);
+          // The upper right quarter, where the stamp stands.
+          const x = Math.round(image.width / 2);
+          const { data } = pen.getImageData(x, 0, image.width - x, Math.round(image.height / 2));
+          let found = 0;
+          for (let at = 0; at < data.length; at += 4)
+            if (data[at] === 0x90 && data[at + 1] === 0x3a && data[at + 2] === 0x03) found += 1;
+          return found;
+        }, Buffer.from(png).toString('base64'));
       const stamped = await render(stampWords);
       expect(textsOf(stamped)).toEqual({ Title: pictureOf(null).title, Warning: stampWords });
       expect(await flarePixels(stamped)).toBeGreaterThan(500);
