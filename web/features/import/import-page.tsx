@@ -63,14 +63,14 @@ function Shown({ study, view }: { study: string; view: ImportView }) {
           <OutcomeSentences counts={view.counts} />
         </Section>
       ) : null}
+      {view.counts && view.counts.refused > 0 && !working ? (
+        <RefusedRows study={study} view={view} />
+      ) : null}
       {applicable && view.counts ? (
         <>
           {view.counts.implausible > 0 ? <ImplausibleRows study={study} view={view} /> : null}
           <ApplyForm key={view.version} study={study} view={view} counts={view.counts} />
         </>
-      ) : null}
-      {view.counts && view.counts.refused > 0 && !working ? (
-        <RefusedRows study={study} view={view} />
       ) : null}
       {open ? <Mapping study={study} view={view} /> : null}
       {view.state === 'applied' ? (

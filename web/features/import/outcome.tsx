@@ -64,7 +64,11 @@ const REFUSED: Column<Refusal>[] = [
     id: 'value',
     heading: text.valueColumn,
     value: (row) => row.value,
-    cell: (row) => <span className="figure break-all">{row.value || words.common.none}</span>,
+    cell: (row) => (
+      <span className="figure inline-block min-w-[12ch] max-w-[32ch] break-words">
+        {row.value || words.common.none}
+      </span>
+    ),
   },
   { id: 'reason', heading: text.reason, value: reasonOf, grow: true, place: 'wide' },
 ];
