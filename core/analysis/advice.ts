@@ -6,7 +6,7 @@ import {
   ordinaryAdvice,
   ownLinesAdvice,
   pooledAdvice,
-} from '../words/advice.ts';
+} from '../words/en.ts';
 import type { MeanModel } from './mean-model.ts';
 import { fixingSubjects } from './pooled-block.ts';
 import type { Advice } from './result.ts';

@@ -14,7 +14,7 @@ import { MOST_PAIRS, pairsWithin, sampleVariogram } from '../independence/variog
 import { verdictOf } from '../independence/verdict.ts';
 import { ordinaryError } from '../linear/fit-ols.ts';
 import { fitRandomIntercept } from '../mixed/fit-random-intercept.ts';
-import { headlineText } from '../words/headline.ts';
+import { headlineText } from '../words/en.ts';
 import { type CheckBase, checkBase } from './check-base.ts';
 import type { MeanModel } from './mean-model.ts';
 import { nullable } from './nullable.ts';

@@ -1,5 +1,5 @@
 import { known, type Maybe, notKnown, type ReasonCode } from '../errors.ts';
-import { reasonText } from '../words/reasons.ts';
+import { reasonText } from '../words/en.ts';
 
 /** A key that may be null, and the key that then says why. */
 export type Nullable<K extends string, T> = { [P in K]: T | null } & {

@@ -1,7 +1,7 @@
 import type { ReasonCode } from '../errors.ts';
 import { type OwnLines, summariseSlopes } from '../lines/own-lines.ts';
 import type { Structure } from '../table/structure.ts';
-import { notFittedWords } from '../words/advice.ts';
+import { notFittedWords } from '../words/en.ts';
 import { nullable, orReason } from './nullable.ts';
 import type { OwnLineBlock, OwnLinesBlock } from './result.ts';
 

@@ -1,7 +1,6 @@
+import { CholeskyDecomposition, EigenvalueDecomposition, Matrix } from 'ml-matrix';
 import { fUpper } from '../distributions/f.ts';
 import { dot, shiftAndScale } from '../linear/kernels.ts';
-import { cholesky, solveCholesky } from '../linear/small-matrix.ts';
-import { symmetricEigen } from '../linear/symmetric-eigen.ts';
 import { type ClusterBasis, turnDirection } from './cluster-basis.ts';
 
 /** A small-sample F test of several contrasts at once. */
@@ -14,7 +13,7 @@ export interface JointTest {
 
 interface Parts {
   /** ΣP_i (m × m). */
-  readonly omega: Float64Array;
+  readonly omega: Matrix;
   /** G × m × m. */
   readonly own: Float64Array;
   /** G × m × p: u_is = S_iB_iH_C e_s. */
@@ -37,7 +36,7 @@ function weightedDirections(
 function partsOf(basis: ClusterBasis, directions: readonly Float64Array[]): Parts {
   const { p } = basis.fit;
   const m = directions.length;
-  const omega = new Float64Array(m * m);
+  const omega = new Matrix(m, m);
   const own = new Float64Array(basis.count * m * m);
   const u = new Float64Array(basis.count * m * p);
   const weighted = weightedDirections(basis, directions);
@@ -60,7 +59,7 @@ function partsOf(basis: ClusterBasis, directions: readonly Float64Array[]): Part
           sum += lambda * (1 - lambda) * weighted[s]![at]! * weighted[t]![at]!;
         }
         own[(i * m + s) * m + t] = sum;
-        omega[s * m + t]! += sum;
+        omega.set(s, t, omega.get(s, t) + sum);
       }
     }
   }
@@ -131,10 +130,10 @@ function spread(basis: ClusterBasis, parts: Parts, m: number): number {
 }
 
 /** V_CR2 of the contrasts: Σ(h_s'B_ic_i)(h_t'B_ic_i) (m × m). */
-function covariance(basis: ClusterBasis, directions: readonly Float64Array[]): Float64Array {
+function covariance(basis: ClusterBasis, directions: readonly Float64Array[]): Matrix {
   const { p } = basis.fit;
   const m = directions.length;
-  const v = new Float64Array(m * m);
+  const v = new Matrix(m, m);
   const weighted = weightedDirections(basis, directions);
   const scores = new Float64Array(m);
   for (let i = 0; i < basis.count; i++) {
@@ -144,26 +143,21 @@ function covariance(basis: ClusterBasis, directions: readonly Float64Array[]): F
       scores[s] = sum;
     });
     for (let s = 0; s < m; s++) {
-      for (let t = 0; t < m; t++) v[s * m + t]! += scores[s]! * scores[t]!;
+      for (let t = 0; t < m; t++) v.set(s, t, v.get(s, t) + scores[s]! * scores[t]!);
     }
   }
   return v;
 }
 
 /** The symmetric inverse square root of a positive definite matrix (m × m); null where it is not. */
-function inverseRoot(omega: Float64Array, m: number): Float64Array | null {
-  const { values, vectors } = symmetricEigen(omega, 1, m);
+function inverseRoot(omega: Matrix): Matrix | null {
+  const eigen = new EigenvalueDecomposition(omega, { assumeSymmetric: true });
+  const values = eigen.realEigenvalues;
   const largest = Math.max(...values);
   if (!(largest > 0) || values.some((value) => value <= 1e-14 * largest)) return null;
-  const root = new Float64Array(m * m);
-  for (let a = 0; a < m; a++) {
-    for (let b = 0; b < m; b++) {
-      for (let k = 0; k < m; k++) {
-        root[a * m + b]! += (vectors[a * m + k]! * vectors[b * m + k]!) / Math.sqrt(values[k]!);
-      }
-    }
-  }
-  return root;
+  const vectors = eigen.eigenvectorMatrix;
+  const shrunk = vectors.clone().mulRowVector(values.map((value) => 1 / Math.sqrt(value)));
+  return shrunk.mmul(vectors.transpose());
 }
 
 /**
@@ -179,28 +173,23 @@ export function jointTest(
   contrasts: readonly Float64Array[],
   values: ArrayLike<number>,
 ): JointTest | null {
-  const { p } = basis.fit;
   const m = contrasts.length;
   // F does not change when a contrast is multiplied; unit lengths keep squares of squares in range.
   const lengths = contrasts.map((h) => Math.sqrt(dot(h, h)));
   const directions = contrasts.map((h, s) => shiftAndScale(h, 0, 1 / lengths[s]!));
   const estimates = lengths.map((length, s) => values[s]! / length);
-  const root = inverseRoot(partsOf(basis, directions).omega, m);
-  const factor = cholesky(covariance(basis, directions), m);
-  if (!root || !factor) return null;
-  const scaled = directions.map((_, t) => {
-    const h = new Float64Array(p);
-    directions.forEach((direction, s) => {
-      for (let a = 0; a < p; a++) h[a]! += direction[a]! * root[s * m + t]!;
-    });
-    return h;
-  });
+  const root = inverseRoot(partsOf(basis, directions).omega);
+  const factor = new CholeskyDecomposition(covariance(basis, directions));
+  if (!root || !factor.isPositiveDefinite()) return null;
+  const scaled = root
+    .mmul(new Matrix(directions))
+    .to2DArray()
+    .map((h) => Float64Array.from(h));
   const eta = (m * (m + 1)) / spread(basis, partsOf(basis, scaled), m);
   const df2 = eta - m + 1;
   if (!(df2 > 0)) return null;
-  const solved = solveCholesky(factor, estimates, m);
-  let quadratic = 0;
-  for (let s = 0; s < m; s++) quadratic += estimates[s]! * solved[s]!;
+  const column = Matrix.columnVector(estimates);
+  const quadratic = factor.solve(column).dot(column);
   const f = (df2 / (eta * m)) * quadratic;
   return { f, df1: m, df2, p: fUpper(f, m, df2) };
 }

@@ -1,10 +1,10 @@
+/// <reference path="./jstat.d.ts" />
+import jstat from 'jstat';
 import { incompleteGammaLower, incompleteGammaUpper } from './incomplete-gamma.ts';
 import { invertTail } from './invert-tail.ts';
 
-/** The standard normal density at z. */
-export function normalDensity(z: number): number {
-  return Math.exp(-0.5 * z * z) / Math.sqrt(2 * Math.PI);
-}
+const { jStat } = jstat;
+const density = (z: number): number => jStat.normal.pdf(z, 0, 1);
 
 /** P(Z > z) of the standard normal, accurate relative to itself into the far tail. */
 export function normalUpper(z: number): number {
@@ -32,11 +32,11 @@ export function normalQuantile(p: number): number {
     const area = Math.abs(p - 0.5);
     const centre = {
       probability: (z: number) => 0.5 * incompleteGammaLower(0.5, 0.5 * z * z),
-      density: normalDensity,
+      density,
       rising: true,
     };
     return sign * invertTail(centre, area, area * Math.sqrt(2 * Math.PI));
   }
-  const tail = { probability: normalUpper, density: normalDensity, rising: false };
-  return sign * invertTail(tail, small, Math.sqrt(-2 * Math.log(2 * small)) + 0.1);
+  const tail = { probability: normalUpper, density, rising: false };
+  return sign * invertTail(tail, small, -jStat.normal.inv(small, 0, 1));
 }

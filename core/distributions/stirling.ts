@@ -1,3 +1,6 @@
+/// <reference path="./jstat.d.ts" />
+import jstat from 'jstat';
+
 /**
  * The two small differences that carry the accuracy of the tails: Stirling's remainder and the deviance term.
  * Written out of them, the prefactors of the incomplete beta and gamma need no logarithm of a gamma function and
@@ -5,21 +8,20 @@
  * computation of binomial probabilities").
  */
 
-const SERIES_FROM = 15;
+const { jStat } = jstat;
+
+/** From here on the series is exact to double precision, where log Γ would lose the digits that cancel. */
+const SERIES_FROM = 8;
+const HALF_LOG_TWO_PI = 0.5 * Math.log(2 * Math.PI);
 
 /**
  * log Γ(a) − [(a − ½) log a − a + ½ log 2π], for a > 0.
  *
- * Asymptotic series from 15 on; below it steps up by δ(a) = δ(a + 1) + (a + ½) log(1 + 1/a) − 1, which is exact.
+ * Asymptotic series from 8 on (its next term is below 1e-15 there); below it straight from log Γ, to 1e-13.
  */
 export function stirlingRemainder(a: number): number {
-  let shifted = a;
-  let sum = 0;
-  while (shifted < SERIES_FROM) {
-    sum += (shifted + 0.5) * Math.log1p(1 / shifted) - 1;
-    shifted += 1;
-  }
-  const inverse = 1 / shifted;
+  if (a < SERIES_FROM) return jStat.gammaln(a) - ((a - 0.5) * Math.log(a) - a + HALF_LOG_TWO_PI);
+  const inverse = 1 / a;
   const square = inverse * inverse;
   const series =
     1 / 12 -
@@ -28,7 +30,7 @@ export function stirlingRemainder(a: number): number {
         square *
           (1 / 1260 -
             square * (1 / 1680 - square * (1 / 1188 - square * (691 / 360360 - square / 156)))));
-  return sum + series * inverse;
+  return series * inverse;
 }
 
 /**

@@ -21,11 +21,6 @@ export function studentUpper(t: number, df: number): number {
   return t >= 0 ? tail : 1 - tail;
 }
 
-/** P(T ≤ t). */
-export function studentLower(t: number, df: number): number {
-  return studentUpper(-t, df);
-}
-
 /** log of Γ((ν+1)/2)/(√(νπ) Γ(ν/2)) by Stirling remainders, so that a large ν keeps its digits. */
 function logConstant(df: number): number {
   const half = df / 2;

@@ -1,16 +1,16 @@
+import { Matrix } from 'ml-matrix';
 import { StatsError } from '../errors.ts';
 import type { GroupedTable } from '../table/long-table.ts';
 import { dot, meanOf, shiftAndScale } from './kernels.ts';
-import { multiply } from './small-matrix.ts';
 
 /**
- * A model matrix X = X_c M (N × p): X_c has its covariates centred and scaled, M (p × p, row-major, upper
+ * A model matrix X = X_c M (N × p): X_c has its covariates centred and scaled, M (p × p, upper
  * triangular) brings the coefficients back to the user's scale. The first column is the intercept.
  */
 export interface Design {
   readonly names: readonly string[];
   readonly columns: readonly Float64Array[];
-  readonly toUser: Float64Array;
+  readonly toUser: Matrix;
 }
 
 /** A covariate moved to mean 0 and unit root mean square: x = centre + scale · z. */
@@ -27,12 +27,6 @@ export function standardise(x: Float64Array): Scaled {
   const scale = Math.sqrt(dot(moved, moved) / x.length);
   if (!(scale > 0)) return { z: moved, centre, scale: 1 };
   return { z: shiftAndScale(moved, 0, 1 / scale), centre, scale };
-}
-
-function identity(p: number): Float64Array {
-  const m = new Float64Array(p * p);
-  for (let k = 0; k < p; k++) m[k * p + k] = 1;
-  return m;
 }
 
 /** The names of the group's columns: plain with two levels, by level with more. */
@@ -77,13 +71,13 @@ export function timeDesign(table: GroupedTable): Design {
     dummies.push(dummy);
     products.push(product);
   }
-  const toUser = identity(p);
-  toUser[1] = centre;
-  toUser[p + 1] = scale;
+  const toUser = Matrix.eye(p);
+  toUser.set(0, 1, centre);
+  toUser.set(1, 1, scale);
   for (let k = 0; k < extra; k++) {
     const column = 2 + extra + k;
-    toUser[(2 + k) * p + column] = centre;
-    toUser[column * p + column] = scale;
+    toUser.set(2 + k, column, centre);
+    toUser.set(column, column, scale);
   }
   const words = table.levels ? groupNames(table.levels) : { group: [], byGroup: [] };
   return {
@@ -97,18 +91,18 @@ export function timeDesign(table: GroupedTable): Design {
 export function covariateDesign(covariates: readonly { name: string; x: Float64Array }[]): Design {
   const p = covariates.length + 1;
   const n = covariates[0]?.x.length ?? 0;
-  const toUser = identity(p);
+  const toUser = Matrix.eye(p);
   const columns: Float64Array[] = [new Float64Array(n).fill(1)];
   covariates.forEach(({ x }, k) => {
     const { z, centre, scale } = standardise(x);
     columns.push(z);
-    toUser[k + 1] = centre;
-    toUser[(k + 1) * p + k + 1] = scale;
+    toUser.set(0, k + 1, centre);
+    toUser.set(k + 1, k + 1, scale);
   });
   return { names: ['intercept', ...covariates.map(({ name }) => name)], columns, toUser };
 }
 
 /** R of X = QR on the user's scale, from R_c of X_c = Q R_c. */
-export function userR(rCentred: Float64Array, design: Design): Float64Array {
-  return multiply(rCentred, design.toUser, design.names.length);
+export function userR(rCentred: Matrix, design: Design): Matrix {
+  return rCentred.mmul(design.toUser);
 }

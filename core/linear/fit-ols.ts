@@ -1,8 +1,9 @@
+import type { Matrix } from 'ml-matrix';
 import { StatsError } from '../errors.ts';
 import { type Design, userR } from './design.ts';
 import { dot, meanOf, shiftAndScale } from './kernels.ts';
-import { solveUpper, solveUpperTransposed } from './small-matrix.ts';
 import { project, thinQr } from './thin-qr.ts';
+import { solveUpper, solveUpperTransposed } from './triangular.ts';
 
 /** RSS at or below this share of Σy² is rounding: the readings lie on the line. (64 ε)². */
 const NO_VARIANCE = (64 * 2 ** -52) ** 2;
@@ -14,8 +15,8 @@ export interface OlsFit {
   readonly p: number;
   /** p columns of N, orthonormal. */
   readonly q: readonly Float64Array[];
-  /** R of X = QR on the user's scale (p × p, row-major). */
-  readonly r: Float64Array;
+  /** R of X = QR on the user's scale (p × p, upper triangular). */
+  readonly r: Matrix;
   /** p coefficients on the user's scale. */
   readonly beta: Float64Array;
   /** N residuals; exact zeros where there is no residual variance. */
@@ -47,7 +48,7 @@ export function fitOls(design: Design, response: Float64Array): OlsFit {
   const sumOfSquares = dot(response, response);
   const tss = dot(centred, centred);
   const { along, residuals } = project(q, centred);
-  const beta = solveUpper(r, along, p);
+  const beta = solveUpper(r, along);
   beta[0]! += mean;
   let rss = dot(residuals, residuals);
   const hasVariance = rss > NO_VARIANCE * sumOfSquares;
@@ -73,7 +74,7 @@ export function fitOls(design: Design, response: Float64Array): OlsFit {
 
 /** h = R⁻ᵀl (p) of a contrast l (p, on the user's scale): l'β̂ = h'Q'y and its ordinary variance is σ²h'h. */
 export function contrastDirection(fit: OlsFit, contrast: ArrayLike<number>): Float64Array {
-  return solveUpperTransposed(fit.r, contrast, fit.p);
+  return solveUpperTransposed(fit.r, contrast);
 }
 
 /** The p unit vectors, one a coefficient, as directions h. */

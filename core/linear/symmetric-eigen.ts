@@ -1,3 +1,5 @@
+import { EigenvalueDecomposition, Matrix } from 'ml-matrix';
+
 /** Two columns in closed form: the angle that makes the off-diagonal element vanish. */
 function eigenOfTwo(
   s: Float64Array,
@@ -36,46 +38,12 @@ function eigenOfTwo(
   vectors[v + 3] = x;
 }
 
-/** One cyclic Jacobi sweep over work (p × p), turning the rows of `vectors` along; returns the off-diagonal mass. */
-function sweep(work: Float64Array, vectors: Float64Array, v: number, p: number): number {
-  let off = 0;
-  for (let i = 0; i < p - 1; i++) {
-    for (let j = i + 1; j < p; j++) {
-      const b = work[i * p + j]!;
-      off += b * b;
-      if (b === 0) continue;
-      const theta = (work[j * p + j]! - work[i * p + i]!) / (2 * b);
-      const t = Math.sign(theta || 1) / (Math.abs(theta) + Math.sqrt(theta * theta + 1));
-      const c = 1 / Math.sqrt(t * t + 1);
-      const s = t * c;
-      for (let k = 0; k < p; k++) {
-        const x = work[k * p + i]!;
-        const y = work[k * p + j]!;
-        work[k * p + i] = c * x - s * y;
-        work[k * p + j] = s * x + c * y;
-      }
-      for (let k = 0; k < p; k++) {
-        const x = work[i * p + k]!;
-        const y = work[j * p + k]!;
-        work[i * p + k] = c * x - s * y;
-        work[j * p + k] = s * x + c * y;
-      }
-      for (let k = 0; k < p; k++) {
-        const x = vectors[v + k * p + i]!;
-        const y = vectors[v + k * p + j]!;
-        vectors[v + k * p + i] = c * x - s * y;
-        vectors[v + k * p + j] = s * x + c * y;
-      }
-    }
-  }
-  return off;
-}
-
 /**
  * Eigenvalues and eigenvectors of `count` symmetric p × p matrices laid one after another in `s` (row-major).
  *
  * Values (count × p, in no order) and vectors (count × p × p, row-major, one eigenvector a column): S = E Λ E'.
- * Closed form for p = 2, cyclic Jacobi else (Golub & Van Loan, Matrix Computations, 8.5).
+ * Closed form for p = 2, which is most fits and spares large ones an object a subject; else by ml-matrix
+ * (tridiagonal form and implicit QL).
  */
 export function symmetricEigen(
   s: Float64Array,
@@ -88,17 +56,15 @@ export function symmetricEigen(
     for (let i = 0; i < count; i++) eigenOfTwo(s, i * 4, values, vectors, i);
     return { values, vectors };
   }
-  const work = new Float64Array(p * p);
+  const matrix = new Matrix(p, p);
   for (let i = 0; i < count; i++) {
     const at = i * p * p;
-    work.set(s.subarray(at, at + p * p));
-    let size = 0;
-    for (const x of work) size += x * x;
-    for (let k = 0; k < p; k++) vectors[at + k * p + k] = 1;
-    for (let round = 0; round < 60; round++) {
-      if (sweep(work, vectors, at, p) <= 1e-34 * size) break;
+    for (let a = 0; a < p; a++) matrix.setRow(a, s.subarray(at + a * p, at + (a + 1) * p));
+    const own = new EigenvalueDecomposition(matrix, { assumeSymmetric: true });
+    values.set(own.realEigenvalues, i * p);
+    for (let a = 0; a < p; a++) {
+      for (let k = 0; k < p; k++) vectors[at + a * p + k] = own.eigenvectorMatrix.get(a, k);
     }
-    for (let k = 0; k < p; k++) values[i * p + k] = work[k * p + k]!;
   }
   return { values, vectors };
 }

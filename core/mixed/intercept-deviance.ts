@@ -1,4 +1,4 @@
-import { cholesky, solveCholesky } from '../linear/small-matrix.ts';
+import { CholeskyDecomposition, Matrix } from 'ml-matrix';
 import type { InterceptTerms } from './intercept-terms.ts';
 
 /** The profiled REML deviance at one relative covariance factor, and the residual variance that goes with it. */
@@ -16,9 +16,9 @@ export interface DevianceAt {
 export function interceptDeviance(terms: InterceptTerms, thetaSquared: number): DevianceAt {
   const { fit, k, m, e } = terms;
   const { n, p } = fit;
-  const a = new Float64Array(p * p);
+  // What is taken off the identity, lower triangle only: the other half is the same to the last digit.
+  const taken = new Float64Array(p * p);
   const rhs = new Float64Array(p);
-  for (let j = 0; j < p; j++) a[j * p + j] = 1;
   let logC = 0;
   let w = fit.rss;
   for (let i = 0; i < k.length; i++) {
@@ -31,16 +31,26 @@ export function interceptDeviance(terms: InterceptTerms, thetaSquared: number): 
     for (let x = 0; x < p; x++) {
       const left = shrink * m[i * p + x]!;
       rhs[x]! -= left * sum;
-      for (let y = 0; y < p; y++) a[x * p + y]! -= left * m[i * p + y]!;
+      for (let y = 0; y <= x; y++) taken[x * p + y]! += left * m[i * p + y]!;
     }
   }
-  const l = cholesky(a, p);
-  if (!l) return { deviance: Number.POSITIVE_INFINITY, sigmaSquared: Number.NaN };
-  const zeta = solveCholesky(l, rhs, p);
+  const a = Matrix.eye(p);
+  for (let x = 0; x < p; x++) {
+    a.set(x, x, 1 - taken[x * p + x]!);
+    for (let y = 0; y < x; y++) {
+      a.set(x, y, -taken[x * p + y]!);
+      a.set(y, x, -taken[x * p + y]!);
+    }
+  }
+  const factor = new CholeskyDecomposition(a);
+  if (!factor.isPositiveDefinite()) {
+    return { deviance: Number.POSITIVE_INFINITY, sigmaSquared: Number.NaN };
+  }
+  const zeta = factor.solve(Matrix.columnVector(rhs));
   let logA = 0;
   for (let x = 0; x < p; x++) {
-    w -= rhs[x]! * zeta[x]!;
-    logA += 2 * Math.log(l[x * p + x]!);
+    w -= rhs[x]! * zeta.get(x, 0);
+    logA += 2 * Math.log(factor.lowerTriangularMatrix.get(x, x));
   }
   if (!(w > 0)) return { deviance: Number.POSITIVE_INFINITY, sigmaSquared: Number.NaN };
   const df = n - p;

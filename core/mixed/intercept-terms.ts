@@ -35,6 +35,6 @@ export function interceptTerms(fit: OlsFit, start: Int32Array): InterceptTerms {
     e[i] = sum;
   }
   let logDetR = 0;
-  for (let a = 0; a < p; a++) logDetR += Math.log(Math.abs(fit.r[a * p + a]!));
+  for (let a = 0; a < p; a++) logDetR += Math.log(Math.abs(fit.r.get(a, a)));
   return { fit, k, m, e, logDetR };
 }

@@ -1,3 +1,4 @@
+import { Matrix } from 'ml-matrix';
 import { describe, expect, test } from 'vitest';
 import { fitOls } from '../../core/linear/fit-ols.ts';
 import { fitRandomIntercept } from '../../core/mixed/fit-random-intercept.ts';
@@ -21,7 +22,7 @@ const fitted = (yields: number[]) => {
   const design = {
     names: ['intercept'],
     columns: [new Float64Array(yields.length).fill(1)],
-    toUser: Float64Array.of(1),
+    toUser: Matrix.eye(1),
   };
   return fitRandomIntercept(fitOls(design, Float64Array.from(yields)), BATCHES);
 };
