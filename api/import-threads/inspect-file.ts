@@ -1,4 +1,5 @@
 /** A first look at a whole uploaded file, before anything of it is stored or shown. */
+import { isMissing } from './cells.ts';
 import { FileProblem } from './file-problem.ts';
 import { type Delimiter, readHeader, rowsOf } from './rows-of.ts';
 
@@ -36,8 +37,11 @@ export async function inspectFile(path: string, secretNames: string[]): Promise<
     for (let index = 0; index < header.length; index += 1) {
       const cell = (row.cells[index] ?? '').trim();
       if (cell === '') continue;
-      filled[index] = true;
-      if (!secrets.has(cell.toLowerCase())) onlySecrets[index] = false;
+      // A gap written as NA or a dot does not make a list of arms into something else.
+      if (!isMissing(cell)) {
+        filled[index] = true;
+        if (!secrets.has(cell.toLowerCase())) onlySecrets[index] = false;
+      }
       const kept = samples[index] ?? [];
       if (kept.length < 3 && !kept.includes(cell)) kept.push(cell.slice(0, 60));
     }
