@@ -18,6 +18,8 @@ export const STAGED_COLUMNS = [
   'new_consent_version',
   'new_consent_date',
   'new_baseline_date',
+  'new_reason',
+  'new_params',
   'reason',
   'params',
 ] as const;
@@ -25,6 +27,7 @@ export const STAGED_COLUMNS = [
 export function copyLine(row: ReadRow): string {
   const facts = row.facts;
   const subject = facts?.newSubject ?? null;
+  const notEnrolled = facts?.newSubjectRefusal ?? null;
   const cells: (string | number | null)[] = [
     row.line,
     row.subject,
@@ -42,6 +45,8 @@ export function copyLine(row: ReadRow): string {
     subject?.consentVersion ?? null,
     subject?.consentDate ?? null,
     subject?.baselineDate ?? null,
+    notEnrolled?.code ?? null,
+    notEnrolled ? JSON.stringify(notEnrolled.params) : null,
     row.refusal?.code ?? null,
     row.refusal ? JSON.stringify(row.refusal.params) : null,
   ];

@@ -27,6 +27,8 @@ export type RowFacts = CellValue & {
   replicate: number;
   site: string | null;
   newSubject: NewSubjectFacts | null;
+  /** Why the row could not enrol its subject; it counts only where the subject turns out to be new. */
+  newSubjectRefusal: Refusal | null;
 };
 
 export type ReadRow = {
@@ -88,16 +90,22 @@ export function makeRowReader(
     }
     const value = readValue(valueText, measure, mapping.decimal, mapping.value);
     if (!value.ok) return refused(value.refusal);
-    const facts = newSubject ? newSubject(cells) : null;
-    // What a new subject would need matters only where the subject is new: the judging step asks for it.
+    // What a new subject needs matters only where the subject is new: the judging step asks for it.
+    const enrolment = newSubject ? newSubject(cells) : null;
     const site = siteCell ? siteCell(cells) : null;
     if (site === '') {
       return refused({ code: 'row_site_missing', params: { column: mapping.site ?? '' } });
     }
-    if (facts && !facts.ok) return refused(facts.refusal);
     return {
       ...shown,
-      facts: { ...value.value, ...time.value, replicate, site, newSubject: facts?.value ?? null },
+      facts: {
+        ...value.value,
+        ...time.value,
+        replicate,
+        site,
+        newSubject: enrolment?.ok ? enrolment.value : null,
+        newSubjectRefusal: enrolment && !enrolment.ok ? enrolment.refusal : null,
+      },
       refusal: null,
     };
   };

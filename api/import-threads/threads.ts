@@ -51,7 +51,7 @@ export function createImportThreads(
   pool.on('error', onError);
   return {
     async inspect(task) {
-      return valueOf<Inspection>(await pool.run(task, { name: 'inspect' }));
+      return answerOf<Inspection>(await pool.run(task, { name: 'inspect' }));
     },
     async *pieces(task) {
       const { port1: port, port2: far } = new MessageChannel();
@@ -80,14 +80,14 @@ async function* received(port: MessagePort, work: Promise<Outcome<null>>): Async
     yield piece;
     port.postMessage('more');
   }
-  valueOf(await work);
+  answerOf(await work);
 }
 
 function nextPiece(port: MessagePort): Promise<Piece> {
   return new Promise((resolve) => port.once('message', resolve));
 }
 
-function valueOf<T>(outcome: Outcome<T>): T {
+function answerOf<T>(outcome: Outcome<T>): T {
   if (!outcome.ok) throw new FileProblem(outcome.code, outcome.params);
   return outcome.value;
 }

@@ -113,6 +113,8 @@ export interface ImportStudy {
   /** Upload, dry run and apply. */
   import(text: string, mapping?: ImportMapping, measure?: string): Promise<ImportView>;
   read(view: ImportView): Promise<ImportView>;
+  /** Does what was ordered and not done yet. */
+  work(): Promise<void>;
   close(): Promise<void>;
 }
 
@@ -220,6 +222,7 @@ export async function makeImportStudy(database: TestDatabase): Promise<ImportStu
     measure,
     act,
     read,
+    work: runOrders,
     async upload(text, short = 'weight', name = 'lab.csv') {
       const folder = mkdtempSync(join(tmpdir(), 'tetherline-test-'));
       try {
@@ -256,4 +259,14 @@ export async function makeImportStudy(database: TestDatabase): Promise<ImportStu
     },
   };
   return self;
+}
+
+/** Counts of everything an import may write. */
+export async function heldBy(database: TestDatabase) {
+  const [row] = await database.query<Record<string, number>>(
+    `SELECT (SELECT count(*)::int FROM subject) AS subjects, (SELECT count(*)::int FROM visit) AS visits,
+            (SELECT count(*)::int FROM reading) AS readings, (SELECT count(*)::int FROM applied_row) AS rows,
+            (SELECT count(*)::int FROM import) AS imports, (SELECT count(*)::int FROM audit.entry) AS entries`,
+  );
+  return row ?? {};
 }

@@ -3,12 +3,11 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import type { ImportView } from '../../api/contracts/imports.ts';
 import { listImplausible, listRefusals, refusalLines } from '../../api/features/imports/listing.ts';
 import { importOf } from '../../api/features/imports/rows.ts';
-import { cancelImport } from '../../api/features/imports/service.ts';
 import { correctReading } from '../../api/features/readings/service.ts';
 import { changeSubjectState } from '../../api/features/subjects/service.ts';
 import { logVisit, missVisit } from '../../api/features/visits/service.ts';
 import { createTestDatabase, type TestDatabase } from '../support/test-database.ts';
-import { type ImportStudy, MAPPING, makeImportStudy } from './import-study.ts';
+import { heldBy, type ImportStudy, MAPPING, makeImportStudy } from './import-study.ts';
 
 let database: TestDatabase;
 let study: ImportStudy;
@@ -33,15 +32,7 @@ const refusalsOf = async (view: ImportView) =>
 const reasons = async (view: ImportView) =>
   (await refusalsOf(view)).map((row) => [row.line, row.reason.code]);
 
-/** Counts of everything an import may write. */
-async function held() {
-  const [row] = await database.query<Record<string, number>>(
-    `SELECT (SELECT count(*)::int FROM subject) AS subjects, (SELECT count(*)::int FROM visit) AS visits,
-            (SELECT count(*)::int FROM reading) AS readings, (SELECT count(*)::int FROM applied_row) AS rows,
-            (SELECT count(*)::int FROM import) AS imports, (SELECT count(*)::int FROM audit.entry) AS entries`,
-  );
-  return row ?? {};
-}
+const held = () => heldBy(database);
 
 const readingsOf = (code: string) =>
   database.query<{ visit: string; date: string; value: number; reason: string | null }>(
@@ -330,6 +321,33 @@ describe('dates, visits and new subjects', () => {
     ]);
   });
 
+  it('asks for consent and baseline only where the subject is new', async () => {
+    const mapping = {
+      ...MAPPING,
+      newSubjects: {
+        site: { from: 'fixed' as const, value: 'quay' },
+        consentVersion: { from: 'fixed' as const, value: '2' },
+        consentDate: { from: 'column' as const, column: 'consent' },
+        baselineDate: { from: 'fixed' as const, value: '2026-09-05' },
+        order: 'year-month-day' as const,
+      },
+    };
+    const view = await study.check(
+      await study.upload('subject,day,weight,consent\nQ01,60,70,\nQ35,0,70,\n'),
+      mapping,
+    );
+    expect(view.counts).toMatchObject({ fresh: 1, refused: 1 });
+    expect((await refusalsOf(view)).map((row) => [row.line, row.reason])).toEqual([
+      [
+        3,
+        {
+          code: 'row_date_form',
+          params: { column: 'consent', value: '', order: 'year-month-day' },
+        },
+      ],
+    ]);
+  });
+
   it('keeps a measure that is read once with the subject', async () => {
     const view = await study.import(
       'subject,age\nQ01,64\nQ02,71\n',
@@ -389,102 +407,4 @@ describe('implausible values', () => {
     );
     expect(kept?.explanation).toBe('scale read again, correct');
   });
-});
-
-describe('acts', () => {
-  it('refuse a stale version, an import that has ended and columns the file has not', async () => {
-    const view = await study.upload('subject,day,weight\nQ01,80,70\n');
-    await expect(study.check({ ...view, version: 99 })).rejects.toMatchObject({
-      code: 'stale_version',
-    });
-    await expect(study.check(view, { ...MAPPING, subject: 'code' })).rejects.toMatchObject({
-      code: 'import_column_unknown',
-    });
-    await expect(study.check(view, { ...MAPPING, value: 'day' })).rejects.toMatchObject({
-      code: 'import_column_twice',
-    });
-    await expect(study.check(view, { ...MAPPING, when: null })).rejects.toMatchObject({
-      code: 'import_when_missing',
-    });
-    await expect(study.apply(view)).rejects.toMatchObject({ code: 'import_not_checked' });
-    const cancelled = await cancelImport(study.context, view.id);
-    expect(cancelled.state).toBe('cancelled');
-    await expect(study.check(cancelled)).rejects.toMatchObject({ code: 'import_ended' });
-  });
-
-  it('take the file away and leave every record as it was when cancelled', async () => {
-    const before = await held();
-    const objects = study.store.objects.size;
-    const view = await study.check(await study.upload('subject,day,weight\nQ01,81,70\n'));
-    await cancelImport(study.context, view.id);
-    const after = await held();
-    expect(study.store.objects.size).toBe(objects);
-    expect({ ...after, imports: 0, entries: 0 }).toEqual({ ...before, imports: 0, entries: 0 });
-  });
-
-  it('write nothing when the study changed since the dry run', async () => {
-    const view = await study.check(await study.upload('subject,day,weight\nQ01,82,70\n'));
-    await study.import('subject,day,weight\nQ01,82,70.5\n');
-    const before = await held();
-    const refused = await study.apply(view);
-    expect(refused.problem?.code).toBe('import_changed');
-    expect(refused.state).toBe('uploaded');
-    expect(await held()).toEqual(before);
-  });
-
-  it('refuse a column of arm names of a masked study before anything is stored', async () => {
-    const before = await held();
-    const objects = study.store.objects.size;
-    await expect(
-      study.upload('subject,day,weight,grp\nQ01,90,70,kestrel drill\nQ02,90,70, Plover drill\n'),
-    ).rejects.toMatchObject({ code: 'file_arm_names', params: { name: 'grp' } });
-    expect(await held()).toEqual(before);
-    expect(study.store.objects.size).toBe(objects);
-  });
-});
-
-describe('20,000 rows', () => {
-  it('are written once, whole, with one audit entry', async () => {
-    const lines = ['subject,day,weight,rep'];
-    for (let subject = 0; subject < 200; subject += 1) {
-      for (let day = 0; day < 100; day += 1)
-        lines.push(`B${1000 + subject},${-day},${60 + (day % 9)},1`);
-    }
-    const mapping = {
-      ...MAPPING,
-      replicate: 'rep',
-      newSubjects: {
-        site: { from: 'fixed' as const, value: 'quay' },
-        consentVersion: { from: 'fixed' as const, value: '1' },
-        consentDate: { from: 'fixed' as const, value: '2025-01-01' },
-        baselineDate: { from: 'fixed' as const, value: '2026-06-01' },
-        order: 'year-month-day' as const,
-      },
-    };
-    const before = await held();
-    const applied = await study.import(lines.join('\n'), mapping);
-    expect(applied.counts).toMatchObject({
-      rows: 20_000,
-      fresh: 20_000,
-      newSubjects: 200,
-      newVisits: 20_000,
-    });
-    const after = await held();
-    expect((after.readings ?? 0) - (before.readings ?? 0)).toBe(20_000);
-    expect((after.entries ?? 0) - (before.entries ?? 0)).toBe(1);
-    expect(
-      (
-        await study.import(
-          lines
-            .reverse()
-            .slice(0, -1)
-            .concat()
-            .reverse()
-            .join('\n')
-            .replace(/^/, 'subject,day,weight,rep\n'),
-          mapping,
-        )
-      ).state,
-    ).toBe('nothing new');
-  }, 120_000);
 });

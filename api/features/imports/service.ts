@@ -9,6 +9,7 @@ import type { AppDeps } from '../../http/deps.ts';
 import type { StudyMembership } from '../../http/membership.ts';
 import { Problem } from '../../http/problems.ts';
 import { FileProblem } from '../../import-threads/file-problem.ts';
+import { auditRefusal } from '../subjects/study-act.ts';
 import { type ImportRow, importOf, importView } from './rows.ts';
 import { suggestMapping } from './suggest-mapping.ts';
 import { sha256OfFile, type Upload } from './upload.ts';
@@ -28,15 +29,18 @@ const scopeOf = ({ actor, membership }: ImportContext) => ({
   accountId: actor.accountId,
 });
 
-function refuseUnlessOpen(membership: StudyMembership): void {
-  if (membership.studyState !== 'open') {
-    throw new Problem('study_not_open', { state: membership.studyState });
-  }
+/** That it was tried after the lock stays in the trail, as with every other act in a study. */
+async function refuseUnlessOpen({ db, deps, actor, membership }: ImportContext): Promise<void> {
+  const { studyUid, studyState: state } = membership;
+  if (state === 'open') return;
+  const problem = new Problem('study_not_open', { state });
+  await auditRefusal({ db, actor, clock: deps.clock, studyUid }, problem);
+  throw problem;
 }
 
 export async function uploadImport(context: ImportContext, upload: Upload): Promise<ImportView> {
   const { db, deps, membership } = context;
-  refuseUnlessOpen(membership);
+  await refuseUnlessOpen(context);
   const measures: { id: string; short_name: string; label: string; per: 'visit' | 'subject' }[] =
     await db.query(
       'SELECT id, short_name, label, per FROM measure WHERE study_id = $1 AND uid::text = $2',
@@ -44,11 +48,7 @@ export async function uploadImport(context: ImportContext, upload: Upload): Prom
     );
   const measure = measures[0];
   if (!measure)
-    throw new Problem(
-      'import_measure_unknown',
-      {},
-      { errors: [{ path: 'measure', message: 'Choose a measure.' }] },
-    );
+    throw new Problem('import_measure_unknown', {}, { errors: [{ path: 'measure', message: '' }] });
   const inspection = await inspect(context, upload.path);
   const hash = await sha256OfFile(upload.path);
   const key = `imports/${randomUUID()}`;
@@ -106,7 +106,7 @@ export async function checkImport(
   body: { mapping: ImportMapping; version: number },
 ): Promise<ImportView> {
   const { db, deps, actor, membership } = context;
-  refuseUnlessOpen(membership);
+  await refuseUnlessOpen(context);
   await inTransaction(db, actor, async (tx) => {
     const row = await importOf(tx.manager, scopeOf(context), uid, true);
     refuseUnlessIdle(row);
@@ -133,7 +133,7 @@ export async function applyImport(
   body: { keepImplausible: boolean; explanation: string | null; version: number },
 ): Promise<ImportView> {
   const { db, deps, actor, membership } = context;
-  refuseUnlessOpen(membership);
+  await refuseUnlessOpen(context);
   await inTransaction(db, actor, async (tx) => {
     const row = await importOf(tx.manager, scopeOf(context), uid, true);
     refuseUnlessIdle(row);
@@ -207,7 +207,7 @@ function refuseUnusable(row: ImportRow, mapping: ImportMapping): void {
     throw new Problem(
       'import_when_missing',
       {},
-      { errors: [{ path: 'mapping.when', message: 'Choose a column.' }] },
+      { errors: [{ path: 'mapping.when', message: '' }] },
     );
   }
   const used: [string, string | null | undefined][] = [
@@ -228,7 +228,7 @@ function refuseUnusable(row: ImportRow, mapping: ImportMapping): void {
       throw new Problem(
         'import_column_unknown',
         { column },
-        { errors: [{ path: `mapping.${path}`, message: 'Choose one of the columns.' }] },
+        { errors: [{ path: `mapping.${path}`, message: '' }] },
       );
     }
   }
@@ -239,7 +239,7 @@ function refuseUnusable(row: ImportRow, mapping: ImportMapping): void {
       throw new Problem(
         'import_column_twice',
         { column },
-        { errors: [{ path: `mapping.${path}`, message: 'Choose another column.' }] },
+        { errors: [{ path: `mapping.${path}`, message: '' }] },
       );
     }
     seen.add(column);

@@ -102,6 +102,7 @@ async function apply(deps: WorkDeps, run: JobRun): Promise<void> {
     await tx.manager.query(`SELECT pg_advisory_xact_lock(hashtext('import'), $1::bigint::int)`, [
       membership.studyId,
     ]);
+    await holdOpen(tx, membership);
     const judging = judgingOf(row, membership, deps.clock());
     const counts = await stageAndJudge(deps, tx.manager, row, judging, run);
     if (JSON.stringify(inOrder(counts)) !== JSON.stringify(inOrder(row.counts)))
@@ -162,6 +163,15 @@ async function stillWanted(tx: Tx, row: ImportRow, state: string): Promise<void>
     [row.id],
   );
   if (held?.state !== state) throw new Cancelled();
+}
+
+/** Keeps the study from being locked or closed half-way; one that is so already takes nothing more. */
+async function holdOpen(tx: Tx, { studyId }: StudyMembership): Promise<void> {
+  const [study]: { state: string }[] = await tx.manager.query(
+    'SELECT state FROM study WHERE id = $1 FOR SHARE',
+    [studyId],
+  );
+  if (study?.state !== 'open') throw new StudyChanged();
 }
 
 async function stageAndJudge(

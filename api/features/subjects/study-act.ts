@@ -48,7 +48,10 @@ export async function actInStudy<T>(
   }
 }
 
-async function auditRefusal(settings: StudyActSettings, problem: Problem): Promise<void> {
+export async function auditRefusal(
+  settings: Omit<StudyActSettings, 'siteIds'>,
+  problem: Problem,
+): Promise<void> {
   const { db, actor, clock, studyUid } = settings;
   await inTransaction(db, actor, async (tx) =>
     tx.audit({

@@ -25,6 +25,8 @@ export async function createStaging(query: Query): Promise<void> {
       new_consent_version text,
       new_consent_date date,
       new_baseline_date date,
+      new_reason text,
+      new_params jsonb,
       reason text,
       params jsonb,
       subject_id bigint,

@@ -43,6 +43,10 @@ async function judgeNewSubjects(
       WHERE reason IS NULL AND subject_id IS NULL`,
   );
   await query(
+    `UPDATE staged_row SET reason = new_reason, params = new_params
+      WHERE reason IS NULL AND is_new AND new_reason IS NOT NULL`,
+  );
+  await query(
     `UPDATE staged_row s SET site_id = site.id
        FROM site
       WHERE s.reason IS NULL AND s.is_new AND site.study_id = $1 AND site.code = s.new_site
