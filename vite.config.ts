@@ -24,6 +24,7 @@ export default defineConfig({
       '/demo': { target: apiTarget },
       '/healthz': { target: apiTarget },
       '/readyz': { target: apiTarget },
+      '/metrics': { target: apiTarget },
     },
   },
 });

@@ -1,11 +1,12 @@
 /** Puts the application together, in the order in which a request passes through it. */
 import { randomUUID } from 'node:crypto';
-import { join } from 'node:path';
+import { join, sep } from 'node:path';
 import cookieParser from 'cookie-parser';
 import express, { type Express, type RequestHandler } from 'express';
 import { signInGuard } from './auth/guard.ts';
 import { touchSession } from './auth/sessions.ts';
 import { featureRoutes } from './features/index.ts';
+import { compressed } from './http/compressed.ts';
 import type { AppDeps } from './http/deps.ts';
 import { errorHandler } from './http/error-handler.ts';
 import { originCheck } from './http/origin-check.ts';
@@ -35,7 +36,9 @@ export function createApp(
 
   app.use(numberRequest);
   app.use(requestLog(deps.logger));
+  app.use(deps.metrics.observe);
   app.use(securityHeaders(deps.config.secureCookies));
+  app.use(compressed());
   app.use(underApi(neverStored));
   app.use(cookieParser());
   // Nobody learns what stands under /api, or whether it stands there, without a session.
@@ -90,7 +93,7 @@ function servePages(app: Express, webRoot: string): void {
       redirect: false,
       setHeaders: (res, path) => {
         // The names of built parts hold a hash of their content.
-        const hashed = path.includes(`${join(webRoot, 'assets')}`);
+        const hashed = path.startsWith(join(webRoot, 'assets') + sep);
         res.set('Cache-Control', hashed ? 'public, max-age=31536000, immutable' : 'no-cache');
       },
     }),

@@ -9,6 +9,7 @@ import { createImportThreads } from '../import-threads/threads.ts';
 import { openQueue } from '../jobs/queue.ts';
 import { hourlyUpkeep } from '../jobs/upkeep.ts';
 import { openMailer } from '../mail/mailer.ts';
+import { createMetrics } from '../metrics/metrics.ts';
 import { openStore } from '../storage/open-store.ts';
 import type { Installation } from './installation.ts';
 
@@ -75,6 +76,7 @@ export async function openServices(
       logger,
       threads,
       importThreads,
+      metrics: createMetrics(databases),
     };
     return {
       deps,

@@ -8,6 +8,7 @@ import { routes as healthRoutes } from './health/routes.ts';
 import { routes as importRoutes } from './imports/routes.ts';
 import { routes as jobRoutes } from './jobs/routes.ts';
 import { routes as memberRoutes } from './members/routes.ts';
+import { routes as metricsRoutes } from './metrics/routes.ts';
 import { routes as recordRoutes } from './records/routes.ts';
 import { routes as securityLogRoutes } from './security-log/routes.ts';
 import { routes as sessionRoutes } from './session/routes.ts';
@@ -17,6 +18,7 @@ import { routes as subjectRoutes } from './subjects/routes.ts';
 
 export const featureRoutes: readonly RouteDefinition[] = [
   ...healthRoutes,
+  ...metricsRoutes,
   ...docsRoutes(() => featureRoutes),
   ...sessionRoutes,
   ...accountRoutes,

@@ -7,6 +7,7 @@ import type { Config } from '../config.ts';
 import type { ImportThreads } from '../import-threads/threads.ts';
 import type { Jobs } from '../jobs/jobs.ts';
 import type { Mailer } from '../mail/mailer.ts';
+import type { Metrics } from '../metrics/metrics.ts';
 import type { Secrets } from '../secrets.ts';
 import type { ObjectStore } from '../storage/object-store.ts';
 
@@ -22,6 +23,7 @@ export interface AppDeps {
   logger: Logger;
   threads: AnalysisThreads;
   importThreads: ImportThreads;
+  metrics: Metrics;
   /** Folder of the built pages; without one only the API is served. */
   webRoot?: string;
 }

@@ -88,6 +88,12 @@ export const httpProblems = defineProblems({
     title: 'Not ready',
     detail: 'The database or the file storage can’t be reached at this moment.',
   },
+  metrics_token_needed: {
+    status: 401,
+    title: 'Token needed',
+    detail:
+      'Figures are given to this machine itself, or to a request with the header Authorization: Bearer and the value of METRICS_TOKEN.',
+  },
   failed: {
     status: 500,
     title: 'The server failed',

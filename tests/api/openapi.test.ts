@@ -50,6 +50,7 @@ describe('the API description', () => {
       'GET /api/docs',
       'GET /api/openapi.json',
       'GET /healthz',
+      'GET /metrics',
       'GET /readyz',
       'POST /api/refresh',
       'POST /api/sign-in',

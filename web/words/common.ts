@@ -163,5 +163,6 @@ export const commonProblems: ProblemSentences = {
   busy: 'Others changed the same data at this moment. Nothing was kept; try again.',
   failed: 'The server could not do this. Nothing was changed.',
   not_ready: 'The database or the file storage can’t be reached at this moment. Try again soon.',
+  metrics_token_needed: 'Figures about the server are given only with its token.',
   job_finished: 'This work has finished, so it can’t be cancelled.',
 };

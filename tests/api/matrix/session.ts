@@ -29,6 +29,7 @@ async function spareSession(world: World, who: Who | null): Promise<string> {
 
 export const sessionRows: MatrixRow[] = [
   { route: 'GET /healthz', may: ['public'], status: 200, prepare: still('/healthz') },
+  { route: 'GET /metrics', may: ['public'], status: 200, prepare: still('/metrics') },
   { route: 'GET /readyz', may: ['public'], status: 200, prepare: still('/readyz') },
   {
     route: 'GET /api/openapi.json',
