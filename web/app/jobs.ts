@@ -1,5 +1,5 @@
 /** Long work of the server, followed as it goes on; it goes on too when the page is left. */
-import { useEffect, useState } from 'react';
+import { useEffect, useEffectEvent, useState } from 'react';
 import { type JobView, jobSchema } from '../../api/contracts/jobs.ts';
 import { api } from './api.ts';
 
@@ -15,7 +15,9 @@ const AGAIN_AFTER_MS = 2_000;
 export function useJob(id: string | null, onEnd?: (job: JobView) => void): JobView | null {
   const [job, setJob] = useState<JobView | null>(null);
 
-  // biome-ignore lint/correctness/useExhaustiveDependencies: a new `onEnd` does not start anew
+  // A new `onEnd` does not start anew.
+  const ended = useEffectEvent((last: JobView) => onEnd?.(last));
+
   useEffect(() => {
     setJob(null);
     if (!id) return;
@@ -28,7 +30,7 @@ export function useJob(id: string | null, onEnd?: (job: JobView) => void): JobVi
       setJob(next);
       if (!ENDED.has(next.state)) return;
       stop();
-      onEnd?.(next);
+      ended(next);
     };
     const stop = () => {
       stopped = true;

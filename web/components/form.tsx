@@ -1,4 +1,4 @@
-import { type ReactNode, useEffect, useId, useRef, useState } from 'react';
+import { type ReactNode, useEffect, useEffectEvent, useId, useRef, useState } from 'react';
 import {
   type Control,
   type FieldErrors,
@@ -65,10 +65,10 @@ export function Form<Values extends FieldValues, Output>(props: FormProps<Values
   const shown = attempt > 0 && (messages.length > 0 || problem !== undefined);
 
   // Each refused attempt moves the focus; typing into a field afterwards does not.
-  // biome-ignore lint/correctness/useExhaustiveDependencies: the attempt is the event
-  useEffect(() => {
-    if (shown) summary.current?.focus();
-  }, [attempt, problem]);
+  const answered = useEffectEvent((tries: number, refusal: string | undefined) => {
+    if (tries > 0 && (messages.length > 0 || refusal !== undefined)) summary.current?.focus();
+  });
+  useEffect(() => answered(attempt, problem), [attempt, problem]);
 
   return (
     <form

@@ -4,13 +4,13 @@ import { notify } from './notices.tsx';
 
 /** A SHA-256 in groups of four, so that two people can read it to each other. */
 export function Hash({ value, copy = false }: { value: string; copy?: boolean }) {
-  const groups = value.match(/.{1,4}/g) ?? [];
+  // Each with the place where it begins, which tells apart two groups of the same digits.
+  const groups = [...value.matchAll(/.{1,4}/g)];
   return (
     <span className="inline-flex max-w-full flex-wrap items-baseline gap-x-3">
       <code className="flex flex-wrap gap-x-[0.75ch] text-13">
-        {groups.map((group, index) => (
-          // biome-ignore lint/suspicious/noArrayIndexKey: the groups of one hash never move
-          <span key={index}>{group}</span>
+        {groups.map((group) => (
+          <span key={group.index}>{group[0]}</span>
         ))}
       </code>
       {copy ? (

@@ -1,4 +1,4 @@
-import { useSyncExternalStore } from 'react';
+import { useEffect, useSyncExternalStore } from 'react';
 
 /** One line of the page's live region; nothing floats. */
 type Notice = { id: number; text: string; urgent: boolean } | null;
@@ -27,9 +27,13 @@ function subscribe(listener: () => void): () => void {
   return () => listeners.delete(listener);
 }
 
-/** The live region; the layout shows it once, over the page. */
+/**
+ * The live region; the layout shows it once, over the page, with the path as its key: what was said of one
+ * page is not said on the next.
+ */
 export function Notices() {
   const notice = useSyncExternalStore(subscribe, () => current);
+  useEffect(() => clearNotice, []);
   return (
     <div aria-live={notice?.urgent ? 'assertive' : 'polite'} className="no-print">
       {notice ? (

@@ -1,6 +1,5 @@
-import { useEffect } from 'react';
 import { Outlet, useLocation } from 'react-router-dom';
-import { clearNotice, Notices } from '../../components/notices.tsx';
+import { Notices } from '../../components/notices.tsx';
 import { words } from '../../words/en.ts';
 import { useMe } from '../session.ts';
 import { Places } from './places.tsx';
@@ -12,10 +11,6 @@ export function Layout({ signOut }: { signOut: () => void }) {
   const me = useMe();
   const membership = useShownMembership();
   const { pathname } = useLocation();
-
-  // What was said of one page is not said on the next.
-  // biome-ignore lint/correctness/useExhaustiveDependencies: the path is the event
-  useEffect(() => clearNotice, [pathname]);
 
   return (
     <div className="flex min-h-dvh flex-col">
@@ -29,7 +24,7 @@ export function Layout({ signOut }: { signOut: () => void }) {
         tabIndex={-1}
         className="mx-auto w-full max-w-page grow px-4 pt-6 pb-16 outline-none narrow:px-8"
       >
-        <Notices />
+        <Notices key={pathname} />
         <Outlet key={membership?.study.id ?? 'none'} />
       </main>
       <footer className="no-print mx-auto w-full max-w-page px-4 pb-6 text-13 text-faded narrow:px-8">

@@ -1,4 +1,4 @@
-import { useEffect, useId, useState } from 'react';
+import { useEffect, useEffectEvent, useId, useState } from 'react';
 import { words } from '../../words/en.ts';
 import { Button } from '../button.tsx';
 import type { Filter } from './column.ts';
@@ -99,13 +99,14 @@ function TextPart({ id, value, set }: { id: string; value: string; set: (value: 
     setSettled(value);
     setText(value);
   }
-  // biome-ignore lint/correctness/useExhaustiveDependencies: only typing starts the wait
+  const rested = useEffectEvent((typed: string) => {
+    if (typed === value) return;
+    setSettled(typed);
+    set(typed);
+  });
+  // Only typing starts the wait.
   useEffect(() => {
-    if (text === value) return;
-    const timer = setTimeout(() => {
-      setSettled(text);
-      set(text);
-    }, 250);
+    const timer = setTimeout(() => rested(text), 250);
     return () => clearTimeout(timer);
   }, [text]);
   return (
