@@ -1,7 +1,7 @@
-import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
-import { createRequire } from 'node:module';
+import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import axe from 'axe-core';
 import { type Browser, type BrowserContext, chromium, type Page } from 'playwright-core';
 import { expect } from 'vitest';
 import { findChromium } from './chromium.ts';
@@ -88,11 +88,6 @@ async function openPage(
   };
 }
 
-const AXE_SOURCE = readFileSync(
-  createRequire(import.meta.url).resolve('axe-core/axe.min.js'),
-  'utf8',
-);
-
 interface AxeFinding {
   id: string;
   nodes: { target: unknown[]; failureSummary?: string }[];
@@ -100,7 +95,7 @@ interface AxeFinding {
 
 /** Every rule of axe for WCAG 2.2 AA and good practice, on the page as it stands. */
 export async function expectNoAxeViolations(page: Page): Promise<void> {
-  await page.evaluate(AXE_SOURCE);
+  await page.evaluate(axe.source);
   const findings = (await page.evaluate(async () => {
     const { axe } = window as unknown as {
       axe: { run(): Promise<{ violations: AxeFinding[] }> };
