@@ -126,6 +126,14 @@ describe('a record', () => {
     expect(file.content).toMatchObject({ seed: 1, engine: '0.1.0', purpose: 'planned' });
   });
 
+  it('leaves a trace when its file leaves the house', async () => {
+    const [entry] = await database.query(
+      `SELECT role_then, entity_uid, after FROM audit.entry WHERE action = 'record downloaded'
+        ORDER BY seq DESC LIMIT 1`,
+    );
+    expect(entry).toEqual({ role_then: 'owner', entity_uid: record, after: { contentSha256 } });
+  });
+
   it('is listed, filtered and sorted', async () => {
     await app.post('second', `/cuts/${cut}/check`, {
       specification: { ...specification, measure: 'lapses' },

@@ -1,5 +1,6 @@
 /** Reading analysis records. */
 import type { z } from 'zod';
+import { inTransaction } from '../../audit/transaction.ts';
 import type {
   recordDetailSchema,
   recordListQuerySchema,
@@ -57,12 +58,23 @@ export async function recordDetail(
 
 const EMPTY_PICTURE = '{"subjects":[],"visits":[],"band":[]}';
 
+/** The record as a file; that it left the house is in the trail before its first byte. */
 export async function fileOf(
   scope: StudyScope,
   recordUid: string,
 ): Promise<{ name: string; text: string }> {
   const record = await recordOf(scope, recordUid);
   const signatures = await signaturesOf(scope.db.manager, record.uid);
+  await inTransaction(scope.db, scope.actor, async (tx) =>
+    tx.audit({
+      at: scope.clock(),
+      studyUid: scope.studyUid,
+      action: 'record downloaded',
+      entity: 'analysis_record',
+      entityUid: record.uid,
+      after: { contentSha256: record.contentSha256 },
+    }),
+  );
   const name = `record-cut-${record.cutNumber}-${record.measure}-${record.specificationNumber}.json`;
   return { name, text: recordFile(record, signatures) };
 }
