@@ -13,6 +13,8 @@ export default defineConfig({
     emptyOutDir: true,
     target: 'es2023',
     sourcemap: false,
+    // Tells which part needs which; the weight of a page is reckoned from it.
+    manifest: true,
     chunkSizeWarningLimit: 400,
   },
   server: {

@@ -30,13 +30,7 @@ export async function buildWeb(root: string, say: () => void = () => undefined):
   mkdirSync(dist, { recursive: true });
   const draft = mkdtempSync(join(dist, 'building-'));
   try {
-    const { build } = await import('vite');
-    await build({
-      configFile: join(root, 'vite.config.ts'),
-      logLevel: 'warn',
-      mode: 'production',
-      build: { outDir: draft, emptyOutDir: true },
-    });
+    await buildInto(draft, root);
     // Another start may have been quicker with the same pages: then those are as good.
     if (!existsSync(folder)) renameSync(draft, folder);
   } finally {
@@ -44,6 +38,27 @@ export async function buildWeb(root: string, say: () => void = () => undefined):
   }
   dropOldBuilds(dist, folder);
   return folder;
+}
+
+/**
+ * Vite lets NODE_ENV decide over its own mode. The tests set it to something else, and their build would
+ * then carry React's much larger one for development, which the next start would find and serve.
+ */
+async function buildInto(folder: string, root: string): Promise<void> {
+  const { NODE_ENV: before } = process.env;
+  process.env.NODE_ENV = 'production';
+  try {
+    const { build } = await import('vite');
+    await build({
+      configFile: join(root, 'vite.config.ts'),
+      logLevel: 'warn',
+      mode: 'production',
+      build: { outDir: folder, emptyOutDir: true },
+    });
+  } finally {
+    if (before === undefined) delete process.env.NODE_ENV;
+    else process.env.NODE_ENV = before;
+  }
 }
 
 function dropOldBuilds(dist: string, present: string): void {
