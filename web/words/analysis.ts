@@ -42,6 +42,13 @@ export function isTrend(key: string): boolean {
   return key.startsWith('time');
 }
 
+/** Coefficients as they are read: levels first, then trends, each with its reference before the differences. */
+export function inOrder(keys: readonly string[]): string[] {
+  const kinds = ['intercept', 'group', 'time', 'time_by_group'];
+  const place = (key: string) => kinds.indexOf(key.split(':')[0] ?? '');
+  return [...keys].sort((a, b) => place(a) - place(b) || (a < b ? -1 : 1));
+}
+
 export const analysisWords = {
   stamp: 'independence not met',
   fits: { pooled: 'Pooled line, cluster-robust errors', ordinary: 'Ordinary straight line' },

@@ -90,7 +90,7 @@ export const chartsWords = {
       `${measure}${unit ? `, ${unit}` : ''}${fromZero ? '' : '; the axis does not begin at 0'}`,
     ended: (count: number) =>
       `follow-up ended early, at the last reading (${counted(count, 'subject', 'subjects')})`,
-    few: 'the pooled line fades where fewer than five subjects remain',
+    few: (line: string) => `the ${line} fades where fewer than five subjects remain`,
     twoReadings: 'dashed: a line through two readings, which has no error',
     ribbonWords: 'ribbons hold the middle half and the middle nine tenths of readings at a visit',
     band: '95 % band',

@@ -19,6 +19,7 @@ const interval = (of: Interval) =>
 export const checkWords = {
   heading: 'Check independence before any fit',
   sentence: 'Choose the cut, the measure and the time axis. Each question asked is counted.',
+  forbidden: 'Analysts of the study open checks. Ask its owner for that role.',
   title: (measure: string) => `Independence check of ${inSentence(measure)}`,
   formLabel: 'What to check',
   open: 'Open the check',
@@ -108,10 +109,10 @@ export const checkWords = {
       ? 'As observed: readings hang together by subject'
       : 'As observed: residuals by subject',
   observedText: (measure: string, of: number, within: string, unit: string) =>
-    `Residuals of ${inSentence(measure)} around the ordinary line, one column for each of ${subjects(of)}. The middle column spans ${within} ${unit}.`,
+    `Residuals of ${inSentence(measure)} around the ordinary line, one column for each of ${subjects(of)}. The middle column spans ${within}${unit ? ` ${unit}` : ''}.`,
   dealtTitle: 'The dealt twin: the same residuals dealt at random',
   dealtText: (within: string, unit: string) =>
-    `The same residuals on the same scale. Without dependence, columns would look like these: the middle one spans ${within} ${unit}.`,
+    `The same residuals on the same scale. Without dependence, columns would look like these: the middle one spans ${within}${unit ? ` ${unit}` : ''}.`,
 
   consequence: {
     coefficient: 'Coefficient',
@@ -119,6 +120,7 @@ export const checkWords = {
     ordinary: 'Ordinary error',
     robust: 'Cluster-robust error',
     ratio: 'Robust ÷ ordinary',
+    bar: 'The ratio as a bar on a log scale',
     pOrdinary: 'Ordinary p',
     pRobust: 'Robust p',
     is: 'Ordinary error is',
@@ -157,7 +159,7 @@ export const checkWords = {
   serialCaution: 'Slopes that differ between subjects look alike.',
   variogramTitle: 'Two readings of one subject, by time apart',
   variogramText: (first: string, last: string, total: string, unit: string) =>
-    `Half the squared difference of two residuals of one subject is ${first} at the shortest time apart and ${last} at the longest; between subjects it is ${total} ${unit}.`,
+    `Half the squared difference of two residuals of one subject is ${first} at the shortest time apart and ${last} at the longest; between subjects it is ${total}${unit ? ` ${unit}` : ''}.`,
   variogramMissing: 'The variogram needs pairs of readings of one subject at different times.',
   successiveTitle: (lag1: number) => `Successive residuals: correlation ${formatRatio(lag1)}`,
   successiveTitleNone: 'Successive residuals',

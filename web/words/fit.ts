@@ -4,6 +4,7 @@ import { inSentence } from './analysis.ts';
 export const fitWords = {
   heading: 'Say what this fit is for before you see it',
   sentence: (fit: string, measure: string) => `${fit} of ${inSentence(measure)}.`,
+  forbidden: 'Analysts of the study run fits. Ask its owner for that role.',
   what: 'What will be fitted',
   fit: 'Fit',
   cut: 'Cut',

@@ -84,9 +84,10 @@ export const recordsWords = {
     `${method}: ${estimate}, ${interval}`,
   methods: {
     pooled: 'Cluster-robust pooled line (CR2)',
-    ordinary: 'Ordinary line, errors not met',
+    ordinary: 'Ordinary line, independence not met',
     own: 'Mean of own lines',
     wild: 'Wild cluster bootstrap',
+    wildOf: (name: string) => `${name}, wild bootstrap`,
   },
   wildNote: (p: number | null, draws: number) =>
     p === null

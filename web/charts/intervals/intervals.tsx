@@ -10,7 +10,8 @@ import { Figure } from '../picture/figure.tsx';
 import type { Picture, Size, TwinTable } from '../picture/types.ts';
 
 const words = chartsWords.interval;
-const ROW = 46;
+/** Three lines a method: its name over the whole width, then bar and estimate, then the interval. */
+const ROW = 58;
 
 export type IntervalRow = {
   method: string;
@@ -101,7 +102,7 @@ export function IntervalMarks(props: Omit<Props, 'level'> & { size: Size }) {
       {rows.map((row, index) => (
         <g key={row.method} transform={`translate(0 ${top + index * ROW})`}>
           <text
-            y={15}
+            y={14}
             fontSize={13}
             fontFamily="var(--font-sans)"
             fill="var(--color-ink)"
@@ -114,7 +115,7 @@ export function IntervalMarks(props: Omit<Props, 'level'> & { size: Size }) {
           <Mark row={row} x={x} right={right} />
           <text
             x={size.width}
-            y={17}
+            y={33}
             textAnchor="end"
             fontSize={13}
             fontFamily="var(--font-mono)"
@@ -125,7 +126,7 @@ export function IntervalMarks(props: Omit<Props, 'level'> & { size: Size }) {
           </text>
           <text
             x={size.width}
-            y={34}
+            y={50}
             textAnchor="end"
             fontSize={13}
             fontFamily="var(--font-mono)"
@@ -155,7 +156,7 @@ function Mark(props: { row: IntervalRow; x: (value: number) => number; right: nu
   const { row, x, right } = props;
   if (row.estimate === null) return null;
   const colour = row.chief ? 'var(--color-kelp)' : 'var(--color-faded)';
-  const y = 30;
+  const y = 36;
   const bounded = row.lower !== null || row.upper !== null;
   const from = row.lower === null ? 4 : r(x(row.lower));
   const to = row.upper === null ? right - 4 : r(x(row.upper));

@@ -47,7 +47,7 @@ export function Key({ data, as, ribbons }: { data: SpaghettiData; as: DrawAs; ri
         </Item>
       )}
       {fades && (
-        <Item words={words.few}>
+        <Item words={words.few(data.lineName)}>
           <line x2={14} y1={9} y2={9} stroke="var(--color-kelp)" strokeWidth={3} />
           <line
             x1={14}

@@ -6,7 +6,7 @@ import { StampMark } from '../marks/stamp-mark.tsx';
 import type { Size } from '../picture/types.ts';
 import { type Layout, layoutOf } from './layout.ts';
 import { Ends, Highlight, Paths } from './paths.tsx';
-import { Pooled } from './pooled.tsx';
+import { labelsOf, Pooled } from './pooled.tsx';
 import { Outlying, Ribbons } from './ribbon-marks.tsx';
 import { outlyingOf, ribbonsOf } from './ribbons.ts';
 import type { DrawAs, DrawMany, SpaghettiData } from './types.ts';
@@ -46,6 +46,7 @@ export function SpaghettiMarks(props: {
       ),
     [data, state.as, layout, ribbons, props.pathsBelow],
   );
+  const names = labelsOf(data.lines, layout, data.lineName);
   const shownOver = [state.hovered === state.picked ? null : state.hovered, state.picked];
   return (
     <svg
@@ -78,6 +79,7 @@ export function SpaghettiMarks(props: {
             as={state.as}
             layout={layout}
             hovered={index === 0}
+            names={names}
           />
         ) : null;
       })}

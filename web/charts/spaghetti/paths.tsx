@@ -1,6 +1,7 @@
 /** Thin paths of all subjects, the picked one in full ink, and where follow-up ended early. */
 import { line } from 'd3';
 import { r } from '../marks/axes.tsx';
+import { textWidth } from '../marks/text.ts';
 import { type Layout, pathOf } from './layout.ts';
 import type { DrawAs, SpaghettiSubject } from './types.ts';
 
@@ -68,6 +69,8 @@ export function Highlight(props: {
   as: DrawAs;
   layout: Layout;
   hovered: boolean;
+  /** Where the names of pooled lines stand; a code must not hide them. */
+  names: readonly { x: number; y: number; text: string }[];
 }) {
   const { subject, layout } = props;
   const path = pathOf(subject, props.as);
@@ -76,6 +79,12 @@ export function Highlight(props: {
   const end = layout.x(last.time);
   // The code stands where it can be read whole: left of the end where the picture stops.
   const inside = end > layout.right - 70;
+  const over = layout.y(last.value) + (inside ? -10 : 4);
+  const hides = (y: number) =>
+    props.names.some(
+      (name) => Math.abs(name.y - y) < 15 && end + 70 > name.x - textWidth(name.text, 13),
+    );
+  const labelAt = hides(over) ? layout.y(last.value) + 22 : over;
   return (
     <g>
       <path
@@ -97,7 +106,7 @@ export function Highlight(props: {
       ))}
       <text
         x={r(inside ? end - 4 : end + 8)}
-        y={r(layout.y(last.value) + (inside ? -10 : 4))}
+        y={r(labelAt)}
         textAnchor={inside ? 'end' : 'start'}
         fontSize={13}
         fontWeight={600}

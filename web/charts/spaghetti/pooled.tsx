@@ -96,7 +96,7 @@ function Stretch({ run, layout, dash }: { run: Run; layout: Layout; dash: string
  * Names at the right end of the strong part: the highest line's over it, the lowest line's under it, and
  * a single line's on the side that its slope leaves free.
  */
-function labelsOf(lines: readonly PooledLine[], layout: Layout, lineName: string) {
+export function labelsOf(lines: readonly PooledLine[], layout: Layout, lineName: string) {
   const ends = lines.flatMap((each) => {
     const strong = each.points.filter((point) => point.remaining >= FEW_SUBJECTS);
     const points = strong.length > 1 ? strong : each.points;

@@ -6,7 +6,7 @@ import { useStudy } from '../../app/session.ts';
 import { type Question, questionOf } from '../../app/specification-address.ts';
 import { ButtonLink } from '../../components/button.tsx';
 import { Page } from '../../components/page.tsx';
-import { Answer, Empty, Failed, Loading } from '../../components/states.tsx';
+import { Answer, Empty, Failed, Forbidden, Loading } from '../../components/states.tsx';
 import { words } from '../../words/en.ts';
 import { CheckReport } from './check-report.tsx';
 import { checkQueryOptions } from './queries.ts';
@@ -15,6 +15,16 @@ import { QuestionForm } from './question-form.tsx';
 const text = words.check;
 
 export function CheckPage() {
+  const { roles } = useStudy();
+  if (roles.includes('analyst')) return <OpenToAnalysts />;
+  return (
+    <Page heading={text.heading}>
+      <Forbidden sentence={text.forbidden} />
+    </Page>
+  );
+}
+
+function OpenToAnalysts() {
   const { study } = useStudy();
   const [params] = useSearchParams();
   const question = questionOf(params);

@@ -4,6 +4,7 @@ import { RatioBar, RatioTicks } from '../../charts/ratio/ratio-bar.tsx';
 import { RatioBars } from '../../charts/ratio/ratio-bars.tsx';
 import { type RatioScale, ratioScale } from '../../charts/ratio/ratio-scale.ts';
 import { formatError, formatP, formatRatio } from '../../components/numbers.ts';
+import { ScrollBox } from '../../components/scroll-box.tsx';
 import { Stamp } from '../../components/stamp.tsx';
 import { coefficientName, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
@@ -74,60 +75,64 @@ function Table(props: {
 }) {
   const { scale } = props;
   return (
-    <div className="overflow-x-auto">
+    <div>
       {props.stamped ? (
         <p className="mb-2 flex flex-wrap items-center justify-end gap-3 text-13 text-faded">
           {text.stampNote} <Stamp text={words.analysis.stamp} />
         </p>
       ) : null}
-      <table className="table min-w-[940px]" aria-label={text.caption}>
-        <thead>
-          <tr>
-            <th scope="col">{text.coefficient}</th>
-            <th scope="col">{text.unit}</th>
-            <th scope="col" className="numeric">
-              {text.ordinary}
-            </th>
-            <th scope="col" className="numeric">
-              {text.robust}
-            </th>
-            <th scope="col" className="numeric">
-              {text.ratio}
-            </th>
-            <th scope="col" className="w-[24%]">
-              <span className="block px-3">
-                <RatioTicks scale={scale} />
-              </span>
-            </th>
-            <th scope="col" className="numeric">
-              {text.pOrdinary}
-            </th>
-            <th scope="col" className="numeric">
-              {text.pRobust}
-            </th>
-            <th scope="col">{text.is}</th>
-          </tr>
-        </thead>
-        <tbody>
-          {props.rows.map((row) => (
-            <tr key={row.coefficient}>
-              <th scope="row">{props.name(row)}</th>
-              <td className="whitespace-nowrap text-faded">{props.unit(row)}</td>
-              <td className="numeric">{formatError(row.seOrdinary)}</td>
-              <td className="numeric">{formatError(row.seRobust)}</td>
-              <td className="numeric">{formatRatio(row.ratio)}</td>
-              <td>
+      <ScrollBox label={text.caption}>
+        <table className="table min-w-[940px]" aria-label={text.caption}>
+          <thead>
+            <tr>
+              <th scope="col">{text.coefficient}</th>
+              <th scope="col">{text.unit}</th>
+              <th scope="col" className="numeric">
+                {text.ordinary}
+              </th>
+              <th scope="col" className="numeric">
+                {text.robust}
+              </th>
+              <th scope="col" className="numeric">
+                {text.ratio}
+              </th>
+              <th scope="col" className="w-[24%]">
                 <span className="block px-3">
-                  <RatioBar ratio={row.ratio} moulton={row.moulton} scale={scale} />
+                  <RatioTicks scale={scale} />
                 </span>
-              </td>
-              <td className="numeric text-faded">{formatP(row.pOrdinary)}</td>
-              <td className="numeric">{formatP(row.pRobust)}</td>
-              <td className="whitespace-nowrap">{text.verdicts[row.ordinaryErrorIs]}</td>
+              </th>
+              <th scope="col" className="numeric">
+                {text.pOrdinary}
+              </th>
+              <th scope="col" className="numeric">
+                {text.pRobust}
+              </th>
+              <th scope="col">{text.is}</th>
             </tr>
-          ))}
-        </tbody>
-      </table>
+          </thead>
+          <tbody>
+            {props.rows.map((row) => (
+              <tr key={row.coefficient}>
+                <th scope="row" className="min-w-40">
+                  {props.name(row)}
+                </th>
+                <td className="whitespace-nowrap text-faded">{props.unit(row)}</td>
+                <td className="numeric">{formatError(row.seOrdinary)}</td>
+                <td className="numeric">{formatError(row.seRobust)}</td>
+                <td className="numeric">{formatRatio(row.ratio)}</td>
+                <td>
+                  <span className="block px-3">
+                    <RatioBar ratio={row.ratio} moulton={row.moulton} scale={scale} />
+                  </span>
+                </td>
+                <td className="numeric text-faded">{formatP(row.pOrdinary)}</td>
+                <td className="numeric">{formatP(row.pRobust)}</td>
+                <td className="whitespace-nowrap">{text.verdicts[row.ordinaryErrorIs]}</td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
+      </ScrollBox>
     </div>
   );
 }

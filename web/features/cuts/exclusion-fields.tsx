@@ -54,7 +54,7 @@ function Exclusion(props: {
   return (
     <fieldset className="grid justify-items-start gap-3">
       <legend className="text-13 font-semibold text-faded">{text.exclusion(index + 1)}</legend>
-      <div className="flex flex-wrap gap-4">
+      <div className="flex flex-wrap items-end gap-4">
         <TextField
           {...useField(control, `exclusions.${index}.subjectCode`)}
           label={text.subjectCode}

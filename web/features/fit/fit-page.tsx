@@ -8,7 +8,7 @@ import { ButtonLink } from '../../components/button.tsx';
 import { formatDay } from '../../components/dates.ts';
 import { Facts, Page, Section } from '../../components/page.tsx';
 import { Stamp } from '../../components/stamp.tsx';
-import { Answer, Empty } from '../../components/states.tsx';
+import { Answer, Empty, Forbidden } from '../../components/states.tsx';
 import { timeNames } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { PurposeForm } from './purpose-form.tsx';
@@ -18,10 +18,16 @@ type Fit = 'pooled' | 'ordinary';
 
 /** Asks what the fit is for, before anybody sees it; the result stands at the address of its record. */
 export function FitPage() {
-  const { study } = useStudy();
+  const { study, roles } = useStudy();
   const [params] = useSearchParams();
   const question = questionOf(params);
   const fit: Fit = params.get('fit') === 'ordinary' ? 'ordinary' : 'pooled';
+  if (!roles.includes('analyst'))
+    return (
+      <Page heading={text.heading}>
+        <Forbidden sentence={text.forbidden} />
+      </Page>
+    );
   if (question) return <Asked question={question} fit={fit} />;
   return (
     <Page heading={text.nothingHeading}>

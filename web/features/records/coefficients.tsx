@@ -1,16 +1,19 @@
 /** Every coefficient of the fit with its error; the other robust errors open below. */
 import type { RecordDetail } from '../../../api/contracts/analysis.ts';
 import {
+  decimalsForError,
   formatDf,
   formatError,
   formatEstimate,
   formatInterval,
   formatLoose,
+  formatNumber,
   formatP,
   formatRatio,
 } from '../../components/numbers.ts';
 import { Section } from '../../components/page.tsx';
-import { coefficientName, isTrend, slopeUnit } from '../../words/analysis.ts';
+import { ScrollBox } from '../../components/scroll-box.tsx';
+import { coefficientName, inOrder, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { coefficientOf, groupsOf } from './headline.ts';
 import type { RecordPartProps } from './record-page.tsx';
@@ -18,9 +21,12 @@ import type { RecordPartProps } from './record-page.tsx';
 const text = words.records;
 const names = text.coefficients;
 const FEW_DF = 4;
+const FINE_DIGITS = 2;
 
 function keysOf({ result, fit }: RecordDetail): string[] {
-  return Object.keys((fit === 'ordinary' ? result.ols : result.pooled)?.coefficients ?? {});
+  return inOrder(
+    Object.keys((fit === 'ordinary' ? result.ols : result.pooled)?.coefficients ?? {}),
+  );
 }
 
 function unitOf(record: RecordDetail, key: string): string {
@@ -39,7 +45,7 @@ export function Coefficients({ record }: RecordPartProps) {
       heading={text.coefficientsHeading}
       aside={stamp ? <strong className="text-flare-ink">{stamp}</strong> : undefined}
     >
-      <div className="overflow-x-auto">
+      <ScrollBox label={text.coefficientsCaption}>
         <table className="table" aria-label={text.coefficientsCaption}>
           <thead>
             <tr>
@@ -66,7 +72,7 @@ export function Coefficients({ record }: RecordPartProps) {
             ))}
           </tbody>
         </table>
-      </div>
+      </ScrollBox>
       {test ? <p className="mt-2">{test}</p> : null}
       {record.fit === 'ordinary' && result.ols ? (
         <p className="mt-2 text-faded">
@@ -110,6 +116,13 @@ function CoefficientRow(props: { record: RecordDetail; id: string; name: string;
   );
 }
 
+/** Two digits more than elsewhere: who opens this table holds it beside another program's. */
+function fineNumber(error: number | null): (value: number | null) => string {
+  const decimals = decimalsForError(error);
+  return (value) =>
+    decimals === null ? formatLoose(value) : formatNumber(value, decimals + FINE_DIGITS);
+}
+
 /** CR0 to CR3 beside each other, and the wild bootstrap, for those who compare. */
 function AllErrors({ record }: { record: RecordDetail }) {
   const { pooled } = record.result;
@@ -122,52 +135,64 @@ function AllErrors({ record }: { record: RecordDetail }) {
       <summary className="target inline-flex cursor-pointer items-center text-kelp underline underline-offset-4">
         {text.errorsShow}
       </summary>
-      <div className="mt-2 overflow-x-auto">
-        <table className="table" aria-label={text.errorsHeading}>
-          <thead>
-            <tr>
-              <th scope="col">{names.name}</th>
-              <th scope="col">{names.unit}</th>
-              {[names.cr0, names.cr1, names.cr1s, names.cr2, names.cr3].map((name) => (
-                <th key={name} scope="col" className="numeric">
-                  {name}
-                </th>
-              ))}
-              <th scope="col" className="numeric">
-                {names.wild}
-              </th>
-              {webb ? (
+      <div className="mt-2">
+        <ScrollBox label={text.errorsHeading}>
+          <table className="table" aria-label={text.errorsHeading}>
+            <thead>
+              <tr>
+                <th scope="col">{names.name}</th>
+                <th scope="col">{names.unit}</th>
+                {[names.estimate, names.cr0, names.cr1, names.cr1s, names.cr2, names.cr3].map(
+                  (name) => (
+                    <th key={name} scope="col" className="numeric">
+                      {name}
+                    </th>
+                  ),
+                )}
                 <th scope="col" className="numeric">
-                  {names.webb}
+                  {names.wild}
                 </th>
-              ) : null}
-            </tr>
-          </thead>
-          <tbody>
-            {Object.entries(pooled.coefficients).map(([key, of]) => {
-              const boot = wild?.[key];
-              return (
-                <tr key={key}>
-                  <th scope="row">{coefficientName(key, groups)}</th>
-                  <td className="whitespace-nowrap text-faded">{unitOf(record, key)}</td>
-                  {[of.se_cr0, of.se_cr1, of.se_cr1s, of.se_cr2, of.se_cr3].map((error, index) => (
-                    <td key={names[ERRORS[index] ?? 'cr0']} className="numeric">
-                      {formatLoose(error)}
-                    </td>
-                  ))}
-                  <td className="numeric">
-                    {boot ? text.wildNote(boot.p, boot.draws) : words.common.none}
-                  </td>
-                  {webb ? (
+                {webb ? (
+                  <th scope="col" className="numeric">
+                    {names.webb}
+                  </th>
+                ) : null}
+              </tr>
+            </thead>
+            <tbody>
+              {inOrder(Object.keys(pooled.coefficients)).map((key) => {
+                const of = pooled.coefficients[key];
+                const boot = wild?.[key];
+                if (!of) return null;
+                const fine = fineNumber(of.se_cr2);
+                return (
+                  <tr key={key}>
+                    <th scope="row">{coefficientName(key, groups)}</th>
+                    <td className="whitespace-nowrap text-faded">{unitOf(record, key)}</td>
+                    <td className="numeric">{fine(of.estimate)}</td>
+                    {[of.se_cr0, of.se_cr1, of.se_cr1s, of.se_cr2, of.se_cr3].map(
+                      (error, index) => (
+                        <td key={names[ERRORS[index] ?? 'cr0']} className="numeric">
+                          {fine(error)}
+                        </td>
+                      ),
+                    )}
                     <td className="numeric">
-                      {typeof boot?.webb_p === 'number' ? formatP(boot.webb_p) : words.common.none}
+                      {boot ? text.wildNote(boot.p, boot.draws) : words.common.none}
                     </td>
-                  ) : null}
-                </tr>
-              );
-            })}
-          </tbody>
-        </table>
+                    {webb ? (
+                      <td className="numeric">
+                        {typeof boot?.webb_p === 'number'
+                          ? formatP(boot.webb_p)
+                          : words.common.none}
+                      </td>
+                    ) : null}
+                  </tr>
+                );
+              })}
+            </tbody>
+          </table>
+        </ScrollBox>
         {webb ? <p className="mt-2 max-w-text text-13 text-faded">{text.wildFew}</p> : null}
       </div>
     </details>

@@ -6,6 +6,7 @@ import { formatMoment } from '../../components/dates.ts';
 import { Hash } from '../../components/hash.tsx';
 import { notify } from '../../components/notices.tsx';
 import { Section } from '../../components/page.tsx';
+import { ScrollBox } from '../../components/scroll-box.tsx';
 import { SigningDialog } from '../../components/signing-dialog.tsx';
 import { words } from '../../words/en.ts';
 import { useSignRecord } from './queries.ts';
@@ -50,7 +51,7 @@ export function Signatures({ record }: { record: RecordDetail }) {
 
 function SignatureTable({ signatures }: Pick<RecordDetail, 'signatures'>) {
   return (
-    <div className="overflow-x-auto">
+    <ScrollBox label={text.signaturesCaption}>
       <table className="table" aria-label={text.signaturesCaption}>
         <thead>
           <tr>
@@ -79,6 +80,6 @@ function SignatureTable({ signatures }: Pick<RecordDetail, 'signatures'>) {
           ))}
         </tbody>
       </table>
-    </div>
+    </ScrollBox>
   );
 }

@@ -56,12 +56,19 @@ function rowsOf({ picture, result }: RecordDetail): Row[] {
   });
 }
 
-function columnsOf(record: RecordDetail): Column<Row>[] {
+function columnsOf(record: RecordDetail, rows: readonly Row[]): Column<Row>[] {
   const unit = slopeUnit(record.measure.unit, record.specification.unit);
   const ofMeasure = record.measure.unit ?? undefined;
   const group: Column<Row>[] =
     groupsOf(record).length > 1
-      ? [{ id: 'group', heading: names.group, value: (row) => row.group }]
+      ? [
+          {
+            id: 'group',
+            heading: names.group,
+            value: (row) => row.group,
+            cell: (row) => <span className="whitespace-nowrap">{row.group}</span>,
+          },
+        ]
       : [];
   const stamp: Column<Row>[] = record.stamp
     ? [
@@ -82,6 +89,9 @@ function columnsOf(record: RecordDetail): Column<Row>[] {
   const decimals = decimalsForError(errors[Math.floor(errors.length / 2)]);
   const slope = (value: number | null) =>
     decimals === null ? formatLoose(value) : formatNumber(value, decimals);
+  // A column that would be empty from top to bottom is left out.
+  const filled = (id: 'ended' | 'why', heading: string): Column<Row>[] =>
+    rows.some((row) => row[id] !== null) ? [{ id, heading, value: (row) => row[id] }] : [];
   return [
     {
       id: 'code',
@@ -121,15 +131,15 @@ function columnsOf(record: RecordDetail): Column<Row>[] {
       cell: (row) => formatNumber(row.intercept, record.measure.decimals + 1),
       numeric: true,
     },
-    { id: 'ended', heading: names.ended, value: (row) => row.ended },
-    { id: 'why', heading: names.why, value: (row) => row.why, grow: true },
+    ...filled('ended', names.ended),
+    ...filled('why', names.why),
     ...stamp,
   ];
 }
 
 export function SubjectTable({ record, picked, onPick }: RecordPartProps) {
   const rows = useMemo(() => rowsOf(record), [record]);
-  const columns = useMemo(() => columnsOf(record), [record]);
+  const columns = useMemo(() => columnsOf(record, rows), [record, rows]);
   const own = record.result.per_subject;
   const unit = slopeUnit(record.measure.unit, record.specification.unit);
   return (

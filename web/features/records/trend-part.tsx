@@ -2,7 +2,7 @@
 import type { RecordDetail } from '../../../api/contracts/analysis.ts';
 import { type IntervalRow, Intervals } from '../../charts/intervals/intervals.tsx';
 import { formatEstimate, formatInterval } from '../../components/numbers.ts';
-import { coefficientName, slopeUnit } from '../../words/analysis.ts';
+import { coefficientName, inOrder, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { coefficientOf, groupsOf } from './headline.ts';
 import type { RecordPartProps } from './record-page.tsx';
@@ -79,12 +79,10 @@ function rowsOf(record: RecordDetail): IntervalRow[] {
       ...ownRow(record),
     ];
   // Own lines do not use the group, so their mean answers another question.
-  const keys = Object.keys(record.result.pooled?.coefficients ?? {}).filter((key) =>
-    key.startsWith('time'),
-  );
+  const keys = inOrder(Object.keys(record.result.pooled?.coefficients ?? {})).filter(isTrend);
   return keys.flatMap((key) => [
     ...pooledRow(record, key, coefficientName(key, groups), pooled && key !== 'time'),
-    ...wildRow(record, key, `${coefficientName(key, groups)}, ${text.methods.wild.toLowerCase()}`),
+    ...wildRow(record, key, text.methods.wildOf(coefficientName(key, groups))),
   ]);
 }
 
