@@ -5,14 +5,21 @@ import type TestAgent from 'supertest/lib/agent.js';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { featureRoutes } from '../../api/features/index.ts';
 import { describeApi } from '../../api/http/openapi.ts';
+import { frozenCut } from './matrix/analysis-ground.ts';
 import { matrix } from './matrix/index.ts';
 import { type MatrixRequest, type MatrixRow, mayCall, refusalOf, statusFor } from './matrix/row.ts';
 import { everybody, type Who } from './matrix/who.ts';
-import { makeWorld, type World } from './matrix/world.ts';
+import { ARMS, makeWorld, type World } from './matrix/world.ts';
 
 let world: World;
+/** Names of the arms and, as text of JSON, the codes of the key: what a masked study keeps from everyone here. */
+let secrets: string[];
 beforeAll(async () => {
   world = await makeWorld();
+  await frozenCut(world);
+  const keys = await world.query<{ code: string }>('SELECT code FROM sealed.code_key');
+  expect(keys).toHaveLength(ARMS.length);
+  secrets = [...ARMS, ...keys.map(({ code }) => `"${code}"`)];
 });
 afterAll(() => world.close());
 
@@ -20,6 +27,16 @@ type Method = 'get' | 'post' | 'put' | 'patch' | 'delete';
 const methodOf = (row: MatrixRow) => row.route.split(' ')[0]?.toLowerCase() as Method;
 
 async function send(agent: TestAgent, method: Method, request: MatrixRequest): Promise<Response> {
+  const answer = await sent(agent, method, request);
+  // Arm names stand in the protocol, so the set-up shows them; beside a subject or a count they stand nowhere.
+  if (!request.path.endsWith('/setup')) {
+    const told = secrets.filter((secret) => answer.text?.includes(secret));
+    expect({ path: request.path, told }).toEqual({ path: request.path, told: [] });
+  }
+  return answer;
+}
+
+async function sent(agent: TestAgent, method: Method, request: MatrixRequest): Promise<Response> {
   const call = agent[method](request.path).set(request.headers ?? {});
   if (request.upload) {
     for (const [name, value] of Object.entries(request.upload.fields)) call.field(name, value);
@@ -118,3 +135,21 @@ async function refuseThroughOtherStudy(row: MatrixRow, request: MatrixRequest): 
   const answer = await send(await world.agent('stranger'), methodOf(row), { ...request, path });
   expect({ path, status: answer.status }).toEqual({ path, status: 404 });
 }
+
+describe('after all of it', () => {
+  it('nothing kept of the requests tells who is in which arm', async () => {
+    const kept = await world.query<{ place: string; text: string }>(
+      `SELECT 'trail' AS place, body AS text FROM audit.entry WHERE action <> 'study set up'
+       UNION ALL SELECT 'replay', coalesce(body, '') FROM idempotency
+       UNION ALL SELECT 'job', to_jsonb(job)::text FROM job
+       UNION ALL SELECT 'import', to_jsonb(import)::text FROM import
+       UNION ALL SELECT 'cut', convert_from(bytes, 'UTF8') FROM cut_chunk
+       UNION ALL SELECT 'record', to_jsonb(analysis_record)::text FROM analysis_record
+       UNION ALL SELECT 'letter', to_jsonb(letter)::text FROM letter`,
+    );
+    const places = new Set(kept.map(({ place }) => place));
+    for (const place of ['trail', 'job', 'import', 'cut', 'record'])
+      expect(places).toContain(place);
+    expect(kept.filter(({ text }) => secrets.some((secret) => text.includes(secret)))).toEqual([]);
+  });
+});

@@ -1,9 +1,10 @@
 /** What the analyst's rows stand on: readings, a frozen cut, an opened check and a record. */
 import type { Actor } from '../../../api/audit/actor.ts';
+import { enterAllocation } from '../../../api/features/allocation/service.ts';
 import { enrolSubject } from '../../../api/features/subjects/service.ts';
 import { actInStudy } from '../../../api/features/subjects/study-act.ts';
 import { logVisit } from '../../../api/features/visits/service.ts';
-import type { World } from './world.ts';
+import { ARMS, type World } from './world.ts';
 
 export const specification = {
   measure: 'weight',
@@ -26,6 +27,7 @@ export const below = (world: World, path: string) => `/api/studies/${world.study
 export function frozenCut(world: World): Promise<string> {
   return world.once('analysis: cut', async () => {
     await readings(world);
+    await seal(world);
     return created(world, '/cuts', freezing);
   });
 }
@@ -64,27 +66,42 @@ async function asked(world: World, path: string, body: object, status: number) {
   return answer.body as { id: string; contentSha256: string };
 }
 
-/** Four subjects with three visits each: enough for a line and for its error. */
-async function readings(world: World): Promise<void> {
-  const person = world.people.coordinator;
+const CODES = ['T-1', 'T-2', 'T-3', 'T-4'];
+
+function actingAs(world: World, role: 'coordinator' | 'unblinded statistician') {
+  const person = world.people[role];
   const actor: Actor = {
     accountId: person.id,
     accountUid: person.uid,
     name: person.name,
-    role: 'coordinator',
+    role,
     sessionUid: null,
     requestId: null,
   };
   const { databases } = world.app.deps;
-  const settings = {
-    db: databases.masked,
+  return {
+    db: role === 'coordinator' ? databases.masked : databases.open,
     actor,
     clock: () => world.app.clock.now,
     studyUid: world.study.uid,
     siteIds: null,
   };
-  await actInStudy(settings, async (act) => {
-    for (const [at, code] of ['T-1', 'T-2', 'T-3', 'T-4'].entries()) {
+}
+
+/** So that there is something which no answer may tell. */
+async function seal(world: World): Promise<void> {
+  await actInStudy(actingAs(world, 'unblinded statistician'), (act) =>
+    enterAllocation(
+      act,
+      CODES.map((subjectCode, at) => ({ subjectCode, armName: ARMS[at % 2] ?? '' })),
+    ),
+  );
+}
+
+/** Four subjects with three visits each: enough for a line and for its error. */
+async function readings(world: World): Promise<void> {
+  await actInStudy(actingAs(world, 'coordinator'), async (act) => {
+    for (const [at, code] of CODES.entries()) {
       await enrolSubject(act, {
         siteCode: 'elm',
         code,

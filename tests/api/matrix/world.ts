@@ -27,6 +27,9 @@ export interface World {
   close(): Promise<void>;
 }
 
+/** Of a masked study, so that no answer may hold one but the set-up itself. */
+export const ARMS = ['Slow walk', 'Brisk walk'] as const;
+
 const setup = (shortName: string) => ({
   format: 'tetherline-setup/1',
   study: { name: `Study ${shortName}`, shortName, masked: true },
@@ -34,7 +37,7 @@ const setup = (shortName: string) => ({
     { code: 'elm', name: 'Elm', timeZone: 'UTC' },
     { code: 'fir', name: 'Fir', timeZone: 'Europe/Zurich' },
   ],
-  arms: ['Slow walk', 'Brisk walk'],
+  arms: [...ARMS],
   measures: [
     {
       shortName: 'weight',
