@@ -11,6 +11,7 @@ type Facts = {
   status: number;
   code: string;
   params?: ProblemParams;
+  /** An empty message stands for the sentence of the refusal. */
   errors?: readonly { path: string; message: string }[];
   requestId?: string | null;
 };
@@ -29,7 +30,10 @@ export class ApiProblem extends Error {
     this.status = facts.status;
     this.code = facts.code;
     this.params = facts.params ?? {};
-    this.errors = facts.errors ?? [];
+    this.errors = (facts.errors ?? []).map(({ path, message }) => ({
+      path,
+      message: message || this.message,
+    }));
     this.requestId = facts.requestId ?? null;
   }
 }
@@ -55,7 +59,11 @@ export async function problemFrom(response: Response): Promise<ApiProblem> {
     status: response.status,
     code: facts.code ?? `status_${response.status}`,
     params: facts.params,
-    errors: facts.errors,
+    // Where an entry only repeats the server's sentence, the catalogue has a better one for it.
+    errors: facts.errors?.map(({ path, message }) => ({
+      path,
+      message: message === facts.detail ? '' : message,
+    })),
     requestId: facts.requestId ?? response.headers.get('x-request-id'),
   });
 }
