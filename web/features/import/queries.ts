@@ -8,7 +8,7 @@ import {
   importSchema,
   refusedRowsSchema,
 } from '../../../api/contracts/imports.ts';
-import { api, newIdempotencyKey, type Query } from '../../app/api.ts';
+import { api, type Query } from '../../app/api.ts';
 
 export const importsPath = (study: string) => `/api/studies/${study}/imports`;
 const importPath = (study: string, id: string) => `${importsPath(study)}/${id}`;
@@ -70,6 +70,9 @@ function useImportAct<Input>(study: string, act: (input: Input) => Promise<Impor
   });
 }
 
+/** The same for every try from one state of the import: a second try after a lost answer acts once. */
+const keyOf = (act: 'check' | 'apply', { id, version }: ImportView) => `${act}-${id}-${version}`;
+
 export function useUpload(study: string) {
   return useImportAct(study, ({ measure, file }: { measure: string; file: File }) => {
     const form = new FormData();
@@ -84,7 +87,7 @@ export function useCheckImport(study: string) {
     api(`${importPath(study, view.id)}/check`, {
       method: 'POST',
       body: { mapping, version: view.version },
-      idempotencyKey: newIdempotencyKey(),
+      idempotencyKey: keyOf('check', view),
       answer: importSchema,
     }),
   );
@@ -97,7 +100,7 @@ export function useApplyImport(study: string) {
     api(`${importPath(study, view.id)}/apply`, {
       method: 'POST',
       body: { ...body, version: view.version },
-      idempotencyKey: newIdempotencyKey(),
+      idempotencyKey: keyOf('apply', view),
       answer: importSchema,
     }),
   );
