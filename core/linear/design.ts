@@ -4,8 +4,8 @@ import type { GroupedTable } from '../table/long-table.ts';
 import { dot, meanOf, shiftAndScale } from './kernels.ts';
 
 /**
- * A model matrix X = X_c M (N × p): X_c has its covariates centred and scaled, M (p × p, upper
- * triangular) brings the coefficients back to the user's scale. The first column is the intercept.
+ * A model matrix X = X_c M (N × p): X_c has its covariates centred and scaled, M (p × p, upper triangular) brings
+ * the coefficients back to the user's scale. The first column is the intercept.
  */
 export interface Design {
   readonly names: readonly string[];

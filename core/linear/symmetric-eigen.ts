@@ -59,11 +59,15 @@ export function symmetricEigen(
   const matrix = new Matrix(p, p);
   for (let i = 0; i < count; i++) {
     const at = i * p * p;
-    for (let a = 0; a < p; a++) matrix.setRow(a, s.subarray(at + a * p, at + (a + 1) * p));
-    const own = new EigenvalueDecomposition(matrix, { assumeSymmetric: true });
-    values.set(own.realEigenvalues, i * p);
     for (let a = 0; a < p; a++) {
-      for (let k = 0; k < p; k++) vectors[at + a * p + k] = own.eigenvectorMatrix.get(a, k);
+      for (let b = 0; b < p; b++) matrix.set(a, b, s[at + a * p + b]!);
+    }
+    const own = new EigenvalueDecomposition(matrix, { assumeSymmetric: true });
+    const e = own.eigenvectorMatrix;
+    const lambda = own.realEigenvalues;
+    for (let a = 0; a < p; a++) {
+      values[i * p + a] = lambda[a]!;
+      for (let k = 0; k < p; k++) vectors[at + a * p + k] = e.get(a, k);
     }
   }
   return { values, vectors };
