@@ -43,7 +43,20 @@ export const shortNameSchema = z
     'Every cut has a column of this name: choose another.',
   );
 
-const line = (longest: number) => z.string().trim().min(1).max(longest);
+const line = (longest: number) =>
+  z
+    .string()
+    .trim()
+    .min(1)
+    .max(longest)
+    .regex(/^\P{Cc}*$/u, 'Write it on one line, without tabs or other control characters.');
+
+/** Stands in the file of a cut as it is, where nothing is neutralised: so a formula is refused here. */
+const cellName = (longest: number) =>
+  line(longest).refine(
+    (name) => !/^[=+\-@]/.test(name),
+    'A name does not begin with = + - or @, since a spreadsheet would calculate it: choose another.',
+  );
 
 const siteSchema = z.strictObject({
   code: codeSchema,
@@ -116,7 +129,7 @@ function outside(
 }
 
 const plannedVisitFieldsSchema = z.strictObject({
-  name: line(60).refine(
+  name: cellName(60).refine(
     (name) => name !== 'unscheduled',
     'A visit outside the plan is called unscheduled: choose another name.',
   ),
@@ -140,7 +153,7 @@ export const setupFileSchema = z
     }),
     sites: z.array(siteSchema).min(1).max(500),
     /** Names only, in the order of the protocol; may be empty where nothing is compared. */
-    arms: z.array(line(80)).max(20).default([]),
+    arms: z.array(cellName(80)).max(20).default([]),
     measures: z.array(measureSchema).min(1).max(500),
     visits: z.array(plannedVisitFieldsSchema).min(1).max(500),
   })

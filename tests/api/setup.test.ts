@@ -85,6 +85,13 @@ describe('a set-up file', () => {
       (s) => Object.assign(s.visits[1] ?? {}, { name: 'unscheduled' }),
       'visits.1.name',
     ],
+    ['formula visit', (s) => Object.assign(s.visits[1] ?? {}, { name: '@week' }), 'visits.1.name'],
+    [
+      'two-line visit',
+      (s) => Object.assign(s.visits[1] ?? {}, { name: 'Week\n4' }),
+      'visits.1.name',
+    ],
+    ['formula arm', (s) => Object.assign(s, { arms: ['a', '=b'] }), 'arms.1'],
     ['same day', (s) => Object.assign(s.visits[1] ?? {}, { targetDay: 0 }), 'visits.1.targetDay'],
     [
       'half a day',
