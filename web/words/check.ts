@@ -9,6 +9,7 @@ type Verdict =
   | 'exchangeable'
   | 'serial'
   | 'exchangeable_and_serial';
+type Caution = 'count' | 'censored';
 type Interval = { estimate: number; lower: number | null; upper: number | null };
 
 const readings = (count: number) => counted(count, 'reading', 'readings');
@@ -172,8 +173,9 @@ export const checkWords = {
   cautions: {
     count:
       'This measure is a count. A straight line is a caution here: counts can’t fall below zero and spread more where they are high.',
-  },
-  cautionOther: (code: string) => `Caution of the server: ${code}.`,
+    censored:
+      'Some readings lie below or above a limit. They are counted apart and used in no line, so the line leans away from that limit.',
+  } satisfies Record<Caution, string>,
 
   lockHeading: 'Ordinary straight line',
   locked: 'Ordinary straight line: locked.',

@@ -93,9 +93,7 @@ export function CheckReport(props: {
       {props.form}
       {check.cautions.map(({ code }) => (
         <p key={code} className="mt-4 max-w-text border-l-4 border-edge pl-3">
-          {code in text.cautions
-            ? text.cautions[code as keyof typeof text.cautions]
-            : text.cautionOther(code)}
+          {text.cautions[code]}
         </p>
       ))}
       <TwinPart {...part} />
