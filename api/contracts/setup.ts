@@ -21,12 +21,17 @@ export const reservedColumns = [
   'stamp',
 ] as const;
 
+/** Read as "no value" wherever a table is read. */
+const saysMissing = (text: string) => /^(na|n\/a|nan|null|\.)$/i.test(text);
+const MISSING_NAME = 'This is read as a missing value: choose another.';
+
 export const codeSchema = z
   .string()
   .regex(
     /^[A-Za-z0-9][A-Za-z0-9._-]{0,31}$/,
     'Use 1 to 32 letters, digits, dots, underscores and hyphens, a letter or digit first.',
-  );
+  )
+  .refine((code) => !saysMissing(code), MISSING_NAME);
 
 export const shortNameSchema = z
   .string()
@@ -53,10 +58,12 @@ const line = (longest: number) =>
 
 /** Stands in the file of a cut as it is, where nothing is neutralised: so a formula is refused here. */
 const cellName = (longest: number) =>
-  line(longest).refine(
-    (name) => !/^[=+\-@]/.test(name),
-    'A name does not begin with = + - or @, since a spreadsheet would calculate it: choose another.',
-  );
+  line(longest)
+    .refine(
+      (name) => !/^[=+\-@]/.test(name),
+      'A name does not begin with = + - or @, since a spreadsheet would calculate it: choose another.',
+    )
+    .refine((name) => !saysMissing(name), MISSING_NAME);
 
 const siteSchema = z.strictObject({
   code: codeSchema,

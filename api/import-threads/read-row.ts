@@ -4,6 +4,7 @@ import {
   CODE_FORM,
   type DateOrder,
   isFormula,
+  isMissing,
   type Read,
   type Refusal,
   readDate,
@@ -67,7 +68,8 @@ export function makeRowReader(
       const params = { cells: cells.length, columns: header.length };
       return refused({ code: 'row_ragged', params });
     }
-    if (subject === '') {
+    // What says "missing" in any cell can be nobody's code: the engine would leave its readings out.
+    if (isMissing(subject)) {
       return refused({ code: 'row_subject_missing', params: { column: mapping.subject } });
     }
     if (isFormula(subject)) {

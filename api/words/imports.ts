@@ -161,7 +161,7 @@ export const rowRefusalWords = {
     'The row has {cells} cells and the header has {columns}. Complete the row or remove the extra cells.',
   row_formula:
     'Column `{column}` holds `{value}`, which a spreadsheet would calculate. Write the value itself.',
-  row_subject_missing: 'Column `{column}` is empty. Write the subject code.',
+  row_subject_missing: 'Column `{column}` holds no subject code. Write it.',
   row_subject_form:
     '`{value}` in column `{column}` is not a subject code: letters, digits, dot, hyphen and underscore, at most 32, beginning with a letter or digit.',
   row_value_missing:

@@ -158,6 +158,7 @@ describe('refused rows', () => {
           'Q01,61,71',
           '',
           'Q01,62,70',
+          'NA,0,70',
         ].join('\n'),
       ),
     );
@@ -176,8 +177,10 @@ describe('refused rows', () => {
       [13, 'row_before_consent'],
       [14, 'row_impossible'],
       [16, 'row_duplicate'],
+      // Line 17 is blank.
+      [19, 'row_subject_missing'],
     ]);
-    expect(view.counts).toMatchObject({ rows: 16, fresh: 2, refused: 14 });
+    expect(view.counts).toMatchObject({ rows: 17, fresh: 2, refused: 15 });
   });
 
   it('speak of a subject of another site as of an unknown one', async () => {

@@ -92,6 +92,12 @@ describe('a set-up file', () => {
       'visits.1.name',
     ],
     ['formula arm', (s) => Object.assign(s, { arms: ['a', '=b'] }), 'arms.1'],
+    ['arm that says missing', (s) => Object.assign(s, { arms: ['a', 'N/A'] }), 'arms.1'],
+    [
+      'site that says missing',
+      (s) => Object.assign(s.sites[0] ?? {}, { code: 'NA' }),
+      'sites.0.code',
+    ],
     ['same day', (s) => Object.assign(s.visits[1] ?? {}, { targetDay: 0 }), 'visits.1.targetDay'],
     [
       'half a day',

@@ -158,7 +158,7 @@ export const rowReasons: ProblemSentences = {
     'The row has {cells} cells, the header {columns}. Complete it, or remove extra cells.',
   row_formula:
     '{column} holds “{value}”, which a spreadsheet would calculate. Write the value itself.',
-  row_subject_missing: '{column} is empty. Write the subject code.',
+  row_subject_missing: '{column} holds no subject code. Write it.',
   row_subject_form:
     '“{value}” is not a subject code: letters, digits, dot, hyphen and underscore, at most 32.',
   row_value_missing:
