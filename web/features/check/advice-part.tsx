@@ -4,7 +4,7 @@ import { questionQuery } from '../../app/specification-address.ts';
 import { ButtonLink } from '../../components/button.tsx';
 import { Section } from '../../components/page.tsx';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './check-report.tsx';
+import type { PartProps } from './part-props.ts';
 
 const text = words.check;
 

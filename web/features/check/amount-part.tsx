@@ -1,7 +1,7 @@
 import type { CheckView } from '../../../api/contracts/analysis.ts';
 import { formatCount, formatRatio } from '../../components/numbers.ts';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './check-report.tsx';
+import type { PartProps } from './part-props.ts';
 
 const text = words.check.amount;
 const NONE = words.common.none;

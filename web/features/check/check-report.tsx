@@ -7,6 +7,7 @@ import type { CheckView } from '../../../api/contracts/analysis.ts';
 import { cutQueryOptions } from '../../app/cut-queries.ts';
 import { useStudy } from '../../app/session.ts';
 import type { Question } from '../../app/specification-address.ts';
+import type { PartProps } from './part-props.ts';
 import { Page } from '../../components/page.tsx';
 import { words } from '../../words/en.ts';
 import { AdvicePart } from './advice-part.tsx';
@@ -19,16 +20,6 @@ import { TwinPart } from './twin-part.tsx';
 import { TypePart } from './type-part.tsx';
 
 const text = words.check;
-
-export type PartProps = {
-  check: CheckView;
-  question: Question;
-  /** Cut, specification, engine and seed: what files of the pictures keep. */
-  source: string;
-  groups: readonly string[];
-  picked: string | null;
-  onPick: (id: string | null) => void;
-};
 
 export function CheckReport(props: {
   check: CheckView;

@@ -8,7 +8,7 @@ import { ScrollBox } from '../../components/scroll-box.tsx';
 import { Stamp } from '../../components/stamp.tsx';
 import { coefficientName, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './check-report.tsx';
+import type { PartProps } from './part-props.ts';
 import { fileNameOf } from './facts.ts';
 
 const text = words.check.consequence;
@@ -97,6 +97,7 @@ function Table(props: {
                 {text.ratio}
               </th>
               <th scope="col" className="w-[24%]">
+                <span className="sr-only">{text.bar}</span>
                 <span className="block px-3">
                   <RatioTicks scale={scale} />
                 </span>

@@ -13,7 +13,7 @@ import { Form, useField } from '../../components/form.tsx';
 import { Moment } from '../../components/moment.tsx';
 import { TextAreaField } from '../../components/text-field.tsx';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './check-report.tsx';
+import type { PartProps } from './part-props.ts';
 import { useAcknowledge } from './queries.ts';
 
 const text = words.check;

@@ -1,6 +1,6 @@
 import { formatCount, formatShare } from '../../components/numbers.ts';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './check-report.tsx';
+import type { PartProps } from './part-props.ts';
 
 const text = words.check;
 

@@ -16,7 +16,7 @@ import { ScrollBox } from '../../components/scroll-box.tsx';
 import { coefficientName, inOrder, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { coefficientOf, groupsOf } from './headline.ts';
-import type { RecordPartProps } from './record-page.tsx';
+import type { RecordPartProps } from './part-props.ts';
 
 const text = words.records;
 const names = text.coefficients;

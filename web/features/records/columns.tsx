@@ -88,7 +88,11 @@ export function columnsOf(study: string): Column<RecordSummary>[] {
       heading: names.stamp,
       value: (row) => row.stamp,
       cell: (row) =>
-        row.stamp ? <strong className="text-13 text-flare-ink">{row.stamp}</strong> : null,
+        row.stamp ? (
+          <strong className="text-13 text-flare-ink">{row.stamp}</strong>
+        ) : (
+          words.common.none
+        ),
       fixed: true,
     },
     {

@@ -9,7 +9,7 @@ import { Button } from '../../components/button.tsx';
 import { formatCount, formatError, formatEstimate, formatLoose } from '../../components/numbers.ts';
 import { slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
-import type { RecordPartProps } from './record-page.tsx';
+import type { RecordPartProps } from './part-props.ts';
 
 const text = words.records;
 type Subject = RecordDetail['picture']['subjects'][number];

@@ -5,7 +5,7 @@ import type { SpaghettiData } from '../../charts/spaghetti/types.ts';
 import { inSentence, perTime, timeNames } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { groupsOf } from './headline.ts';
-import type { RecordPartProps } from './record-page.tsx';
+import type { RecordPartProps } from './part-props.ts';
 import { recordFile } from './source.ts';
 
 const text = words.records;

@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useCallback, useEffect, useMemo } from 'react';
 import { useParams, useSearchParams } from 'react-router-dom';
 import type { RecordDetail } from '../../../api/contracts/analysis.ts';
+import type { RecordPartProps } from './part-props.ts';
 import { useStudy } from '../../app/session.ts';
 import { formatDay } from '../../components/dates.ts';
 import { formatCount } from '../../components/numbers.ts';
@@ -21,14 +22,6 @@ import { SubjectTable } from './subject-table.tsx';
 import { TrendPart } from './trend-part.tsx';
 
 const text = words.records;
-
-export type RecordPartProps = {
-  record: RecordDetail;
-  /** What files of the pictures keep of the record. */
-  source: string;
-  picked: string | null;
-  onPick: (id: string | null) => void;
-};
 
 export function RecordPage() {
   const { study } = useStudy();

@@ -70,7 +70,7 @@ function SignatureTable({ signatures }: Pick<RecordDetail, 'signatures'>) {
                 <time dateTime={signature.at}>{formatMoment(signature.at, signature.zone)}</time>
               </td>
               <td>{signature.meaning}</td>
-              <td className="py-2">
+              <td className="min-w-72 py-2">
                 <Hash value={signature.contentSha256} />
               </td>
               <td className={signature.valid ? undefined : 'font-semibold text-stop'}>

@@ -15,7 +15,7 @@ import { Section } from '../../components/page.tsx';
 import { slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { groupsOf } from './headline.ts';
-import type { RecordPartProps } from './record-page.tsx';
+import type { RecordPartProps } from './part-props.ts';
 import { recordFile } from './source.ts';
 
 const text = words.records;

@@ -5,7 +5,7 @@ import { formatEstimate, formatInterval } from '../../components/numbers.ts';
 import { coefficientName, inOrder, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { coefficientOf, groupsOf } from './headline.ts';
-import type { RecordPartProps } from './record-page.tsx';
+import type { RecordPartProps } from './part-props.ts';
 import { recordFile } from './source.ts';
 
 const text = words.records;
