@@ -8,8 +8,8 @@ import { ScrollBox } from '../../components/scroll-box.tsx';
 import { Stamp } from '../../components/stamp.tsx';
 import { coefficientName, isTrend, slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './part-props.ts';
 import { fileNameOf } from './facts.ts';
+import type { PartProps } from './part-props.ts';
 
 const text = words.check.consequence;
 type Row = CheckView['consequences'][number];

@@ -7,8 +7,8 @@ import {
 } from '../../charts/residuals/residuals.tsx';
 import { formatLoose } from '../../components/numbers.ts';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './part-props.ts';
 import { fileNameOf, isTethered } from './facts.ts';
+import type { PartProps } from './part-props.ts';
 
 const text = words.check;
 

@@ -4,8 +4,8 @@ import { Variogram } from '../../charts/variogram/variogram.tsx';
 import { formatLoose } from '../../components/numbers.ts';
 import { Section } from '../../components/page.tsx';
 import { words } from '../../words/en.ts';
-import type { PartProps } from './part-props.ts';
 import { fileNameOf, isTethered } from './facts.ts';
+import type { PartProps } from './part-props.ts';
 
 const text = words.check;
 

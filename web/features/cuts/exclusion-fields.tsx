@@ -5,7 +5,7 @@ import { useField } from '../../components/form.tsx';
 import { Select } from '../../components/select.tsx';
 import { TextField } from '../../components/text-field.tsx';
 import { words } from '../../words/en.ts';
-import type { FreezeValues } from './freeze-form.tsx';
+import type { FreezeValues } from './freeze-values.ts';
 
 const text = words.cuts;
 /** A choice needs a value; in the request it becomes null. */

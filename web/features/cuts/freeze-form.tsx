@@ -3,8 +3,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useRef, useState } from 'react';
 import { useController, useFieldArray, useForm } from 'react-hook-form';
 import { useNavigate } from 'react-router-dom';
-import { z } from 'zod';
-import { type CutChoices, freezeCutRequestSchema } from '../../../api/contracts/cuts.ts';
+import type { CutChoices } from '../../../api/contracts/cuts.ts';
 import { newIdempotencyKey } from '../../app/api.ts';
 import { paths } from '../../app/paths.ts';
 import { refusalOf } from '../../app/refusal.ts';
@@ -17,30 +16,11 @@ import { RadioGroup } from '../../components/radio-group.tsx';
 import { TextAreaField, TextField } from '../../components/text-field.tsx';
 import { words } from '../../words/en.ts';
 import { ExclusionFields } from './exclusion-fields.tsx';
+import { type FreezeValues, freezeFormSchema } from './freeze-values.ts';
 import { Preview } from './preview.tsx';
 import { cutPreviewQueryOptions, useFreezeCut } from './queries.ts';
 
 const text = words.cuts;
-const exclusion = z.object({
-  subjectCode: z.string().trim().min(1).max(32),
-  /** Empty in the form: all measures, every visit. */
-  measure: z.string(),
-  visit: z.string(),
-  reason: z.string().trim().min(5).max(500),
-});
-const schema = z
-  .object({
-    ...freezeCutRequestSchema.pick({ name: true, visitCutoff: true, measures: true }).shape,
-    exclusions: z.array(exclusion).max(500),
-    withdrawn: z.enum(['leave out', 'include']),
-    includeReason: z.string().trim(),
-  })
-  .refine(({ withdrawn, includeReason }) => withdrawn !== 'include' || includeReason.length >= 5, {
-    path: ['includeReason'],
-    message: text.needsReason,
-  });
-export type FreezeValues = z.infer<typeof schema>;
-
 const labels = {
   name: text.name,
   visitCutoff: text.visitCutoff,
@@ -56,7 +36,7 @@ export function FreezeForm({ study, choices }: { study: string; choices: CutChoi
   // One key for one intended cut: a try after a lost answer must not freeze it twice.
   const key = useRef({ of: '', key: '' });
   const form = useForm<FreezeValues>({
-    resolver: zodResolver(schema),
+    resolver: zodResolver(freezeFormSchema),
     defaultValues: {
       name: '',
       visitCutoff: choices.today,
