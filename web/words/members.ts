@@ -29,6 +29,7 @@ export const membersWords = {
   chair: 'Chairs the board',
   add: 'Add member',
   added: (name: string) => `${name} is a member now.`,
+  heldNow: (duties: string) => `Held now: ${duties}.`,
   changeWhat: 'The pages open to this person change with their duties, at their next click.',
   changeAct: 'Save duties',
   changed: (name: string) => `The duties of ${name} are changed.`,

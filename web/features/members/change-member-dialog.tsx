@@ -4,6 +4,7 @@ import { Dialog } from '../../components/dialog.tsx';
 import { notify } from '../../components/notices.tsx';
 import { words } from '../../words/en.ts';
 import { DutiesFields } from './duties-fields.tsx';
+import { dutiesInWords } from './duties-in-words.ts';
 import { useChangeMember } from './queries.ts';
 
 const text = words.members;
@@ -29,7 +30,12 @@ export function ChangeMemberDialog({ study, member, sites, onClose }: ChangeMemb
       open
       onClose={onClose}
       heading={text.changeOf(member.name)}
-      what={<p>{text.changeWhat}</p>}
+      what={
+        <>
+          <p>{text.heldNow(dutiesInWords(member))}</p>
+          <p>{text.changeWhat}</p>
+        </>
+      }
       act={text.changeAct}
       ready={duties.roles.length > 0 && !needsSite}
       onAct={async () => {

@@ -20,6 +20,10 @@ import { RemoveMemberDialog } from './remove-member-dialog.tsx';
 
 const text = words.members;
 const PAGE_SIZE = memberListQuerySchema.parse({}).pageSize;
+/** After a refusal the list is read again: the dialog then stands on what is held now, beside what was chosen. */
+const heldNow = (rows: readonly MemberView[], member: MemberView) =>
+  rows.find(({ id }) => id === member.id) ?? member;
+
 const FILTERS: readonly Filter<MemberView>[] = [
   { id: 'text', label: text.search },
   {
@@ -118,14 +122,14 @@ export function MembersPage() {
               <ChangeMemberDialog
                 study={study.id}
                 sites={sites}
-                member={act.member}
+                member={heldNow(rows, act.member)}
                 onClose={() => setAct(null)}
               />
             ) : null}
             {act?.kind === 'remove' ? (
               <RemoveMemberDialog
                 study={study.id}
-                member={act.member}
+                member={heldNow(rows, act.member)}
                 onClose={() => setAct(null)}
               />
             ) : null}
