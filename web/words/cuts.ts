@@ -46,7 +46,7 @@ export const cutsWords = {
   includeReasonHint: 'Such as the section of the protocol that allows it.',
   exclusions: 'Exclusions',
   exclusionsHint:
-    'Readings left out by decision. Each needs a reason, which stays on the cut; excluded readings show it in the file.',
+    'Readings left out by decision. Each needs a reason, which stays on the cut; excluded readings show it in the file. Never name a participant in it.',
   addExclusion: 'Add an exclusion',
   removeExclusion: (number: number) => `Remove exclusion ${number}`,
   exclusion: (number: number) => `Exclusion ${number}`,

@@ -134,7 +134,7 @@ export const importWords = {
   keep: 'are kept, with one explanation for the list',
   chooseKeep: 'Choose whether they are kept or left out.',
   explanation: 'Explanation',
-  explanationHint: 'Stands with each of these readings.',
+  explanationHint: 'Stands with each of these readings. Never name a participant in it.',
   explanationMissing: 'Say in one sentence why they are kept.',
   apply: (count: number) =>
     count === 0 ? 'Record that nothing is new' : `Write ${readings(count)}`,
