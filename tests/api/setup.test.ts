@@ -167,6 +167,13 @@ describe('the first owner', () => {
       { email: 'admin@x.example', administrator: true, role: null },
       { email: 'owner@x.example', administrator: false, role: 'owner' },
     ]);
+    const trail = await database.query(
+      `SELECT after FROM audit.entry WHERE action = 'account created' ORDER BY seq`,
+    );
+    expect(trail.map(({ after }) => after)).toEqual([
+      { email: 'admin@x.example', name: 'Ada', administrator: true },
+      { email: 'owner@x.example', name: 'Ola', administrator: false },
+    ]);
     const view = await readSetup((await database.databases()).masked.manager, study.id);
     expect(setupViewSchema.parse(view)).toMatchObject({
       study: { shortName: 'marsh', masked: true, closingDays: 3, lateDays: 14 },

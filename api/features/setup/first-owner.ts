@@ -109,7 +109,7 @@ export async function accountWithPassword(
     action: 'account created',
     entity: 'account',
     entityUid: account.uid,
-    after: { administrator },
+    after: { email: account.email, name: account.name, administrator },
   });
   return account as Account;
 }
