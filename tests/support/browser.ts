@@ -63,7 +63,7 @@ async function openPage(
     timezoneId: 'Europe/London',
     acceptDownloads: true,
   });
-  context.setDefaultTimeout(20_000);
+  context.setDefaultTimeout(60_000);
   const page = await context.newPage();
   let heard: string[] = [];
   page.on('console', (message) => {

@@ -33,7 +33,7 @@ function run(args: string[]): Promise<Outcome> {
     const child = spawn(process.execPath, ['--import', 'tsx', 'api/cli/analyse.ts', ...args], {
       cwd: repository,
       stdio: ['ignore', 'pipe', 'pipe'],
-      timeout: 60_000,
+      timeout: 180_000,
     });
     const out: Buffer[] = [];
     const err: Buffer[] = [];
