@@ -22,6 +22,9 @@ function useThemeTurns(): number {
   return turns;
 }
 
+/** Up to this many subjects are drawn at full strength. */
+const CROWD = 250;
+
 type Props = {
   subjects: readonly SpaghettiSubject[];
   as: DrawAs;
@@ -46,7 +49,9 @@ function Canvas(props: Props) {
     canvas.height = Math.round(size.height * fine);
     pen.scale(fine, fine);
     const style = getComputedStyle(canvas);
-    const strength = Number(style.getPropertyValue('--subject-opacity')) || 0.18;
+    // Among more paths each is drawn weaker, so that the pooled line is not drowned.
+    const share = Math.max(0.25, Math.min(1, CROWD / subjects.length));
+    const strength = (Number(style.getPropertyValue('--subject-opacity')) || 0.18) * share;
     pen.strokeStyle = style.color;
     pen.lineCap = 'round';
     for (const subject of subjects) {

@@ -83,6 +83,15 @@ function Stretch({ run, layout, dash }: { run: Run; layout: Layout; dash: string
         <path
           d={middle}
           fill="none"
+          stroke="var(--color-surface)"
+          strokeWidth={6}
+          strokeOpacity={0.7}
+        />
+      )}
+      {middle && (
+        <path
+          d={middle}
+          fill="none"
           stroke="var(--color-kelp)"
           strokeWidth={3}
           strokeDasharray={dash}
