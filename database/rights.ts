@@ -34,7 +34,7 @@ export const RECORD_RIGHTS: Record<string, string> = {
   cut: APPEND,
   cut_chunk: APPEND,
   specification: APPEND,
-  check_opening: EDIT,
+  check_opening: APPEND,
   acknowledgement: APPEND,
   analysis_record: APPEND,
   signature: APPEND,

@@ -66,6 +66,7 @@ describe('rights', () => {
       'TRUNCATE visit',
       'UPDATE cut SET name = name',
       'DELETE FROM analysis_record',
+      'UPDATE check_opening SET result = result',
       'UPDATE reading_revision SET reason = reason',
       `INSERT INTO audit.chain VALUES ('x', 0, repeat('0', 64))`,
       'UPDATE audit.entry SET action = action',
