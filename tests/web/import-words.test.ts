@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { rowStudyCodes } from '../../api/features/imports/judge/judging.ts';
 import { rowCellCodes } from '../../api/import-threads/cells.ts';
 import { rowRefusalWords } from '../../api/words/imports.ts';
-import { rowReasons } from '../../web/words/imports.ts';
+import { importWords, rowReasons } from '../../web/words/imports.ts';
 
 const codes = [...rowCellCodes, ...rowStudyCodes].sort();
 
@@ -23,5 +23,24 @@ describe('reasons of refused rows', () => {
       const known = placesOf(rowRefusalWords[code as keyof typeof rowRefusalWords]);
       for (const place of placesOf(sentence)) expect(known, code).toContain(place);
     }
+  });
+});
+
+describe('the figures of a dry run', () => {
+  const { outcome } = importWords;
+
+  it('agree with their number', () => {
+    expect([outcome.known(1), outcome.known(2)]).toEqual([
+      '1 row is known already and changes nothing.',
+      '2 rows are known already and change nothing.',
+    ]);
+    expect([outcome.refused(1), outcome.refused(2)]).toEqual([
+      '1 row is refused; the reason stands below.',
+      '2 rows are refused; the reasons stand below.',
+    ]);
+    expect([outcome.implausible(1), outcome.implausible(2)]).toEqual([
+      '1 value lies outside the plausible range.',
+      '2 values lie outside the plausible range.',
+    ]);
   });
 });

@@ -100,15 +100,21 @@ export const importWords = {
   outcome: {
     fresh: (count: number) =>
       count === 0 ? 'No row is new.' : `${readings(count)} would be written.`,
-    known: (count: number) => `${rows(count)} are known already and change nothing.`,
-    refused: (count: number) => `${rows(count)} are refused; the reasons stand below.`,
+    known: (count: number) =>
+      count === 1
+        ? '1 row is known already and changes nothing.'
+        : `${rows(count)} are known already and change nothing.`,
+    refused: (count: number) =>
+      count === 1
+        ? '1 row is refused; the reason stands below.'
+        : `${rows(count)} are refused; the reasons stand below.`,
     newSubjects: (count: number) => `${counted(count, 'subject', 'subjects')} would be enrolled.`,
     newVisits: (count: number, unscheduled: number) =>
       unscheduled === 0
         ? `${counted(count, 'visit', 'visits')} would be logged.`
         : `${counted(count, 'visit', 'visits')} would be logged, ${formatCount(unscheduled)} of them unscheduled because no window holds the day.`,
     implausible: (count: number) =>
-      `${counted(count, 'value', 'values')} lie outside the plausible range.`,
+      `${counted(count, 'value lies', 'values lie')} outside the plausible range.`,
   },
   appliedHeading: 'These readings are written',
   appliedSentence: (count: number) => `${readings(count)} came with this file.`,
