@@ -69,10 +69,11 @@ async function develop(root: string): Promise<void> {
     closers.push(() => vite.close());
     console.log(platformWords.ready(config.publicUrl, process.uptime().toFixed(1)));
     console.log(platformWords.stopHint);
-    await installation.databaseEnded;
-    console.error(platformWords.databaseGone);
-    await stop();
-    process.exit(1);
+    if (await installation.databaseEnded) {
+      console.error(platformWords.databaseGone);
+      await stop();
+      process.exit(1);
+    }
   } catch (error) {
     await stop();
     throw error;

@@ -20,7 +20,6 @@ export const sessionLimitsSchema = z.object({
 export type SessionLimits = z.infer<typeof sessionLimitsSchema>;
 
 export const signedInSchema = sessionLimitsSchema.extend({ mustChangePassword: z.boolean() });
-export type SignedIn = z.infer<typeof signedInSchema>;
 
 /** Pages that work for a role, in the order they stand under the top bar. */
 export const places = [

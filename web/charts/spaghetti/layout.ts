@@ -7,8 +7,6 @@ import { domainOf, type Tick, ticksFor } from '../marks/ticks.ts';
 import type { Size } from '../picture/types.ts';
 import type { DrawAs, SpaghettiData, SpaghettiSubject } from './types.ts';
 
-export type Point = { x: number; y: number };
-
 export type Layout = {
   x: (time: number) => number;
   y: (value: number) => number;
