@@ -1,5 +1,5 @@
 import { type ChildProcess, spawn } from 'node:child_process';
-import { cpSync, mkdtempSync, rmSync, symlinkSync } from 'node:fs';
+import { chmodSync, cpSync, mkdtempSync, rmSync, symlinkSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join, resolve } from 'node:path';
 import { freePort } from '../../database/server/cluster.ts';
@@ -21,6 +21,8 @@ const AGAIN = 3;
 /** Starts a scratch copy with a data folder of its own: once to make everything, then again and again. */
 export async function run(): Promise<void> {
   const scratch = mkdtempSync(join(tmpdir(), 'tetherline-start-'));
+  // PostgreSQL runs as another user, who has to reach its data folder in here.
+  chmodSync(scratch, 0o711);
   try {
     for (const name of [...ROOMS, ...FILES]) {
       cpSync(join(root, name), join(scratch, name), { recursive: true });
