@@ -22,14 +22,17 @@ export async function inspectFile(path: string, secretNames: string[]): Promise<
   const samples: string[][] = [];
   const onlySecrets: boolean[] = [];
   const filled: boolean[] = [];
+  const named: boolean[] = [];
   for await (const row of rowsOf(path, null)) {
     if (header === null) {
       header = readHeader(row);
       delimiter = row.delimiter;
-      for (const _ of header) {
+      for (const name of header) {
         samples.push([]);
         onlySecrets.push(true);
         filled.push(false);
+        // A column named for an arm tells by ones and noughts who is in it, so its values are not asked.
+        named.push(secrets.has(name.toLowerCase()));
       }
       continue;
     }
@@ -48,7 +51,9 @@ export async function inspectFile(path: string, secretNames: string[]): Promise<
   }
   if (header === null) throw new FileProblem('file_empty');
   if (rows === 0) throw new FileProblem('file_header_only');
-  const secret = header.findIndex((_, index) => filled[index] && onlySecrets[index]);
+  const secret = header.findIndex(
+    (_, index) => named[index] || (filled[index] && onlySecrets[index]),
+  );
   if (secrets.size > 0 && secret >= 0) {
     throw new FileProblem('file_arm_names', { name: header[secret] ?? '' });
   }

@@ -86,6 +86,12 @@ export const importProblems = defineProblems({
     title: 'No file',
     detail: 'The upload holds no file. Choose a CSV file and send it as `file`.',
   },
+  import_file_named_for_arm: {
+    status: 422,
+    title: 'Named for an arm',
+    detail:
+      'The name of the file holds an arm name of this masked study. Nothing was stored. Rename the file and upload it again.',
+  },
   import_file_too_large: {
     status: 413,
     title: 'File too large',

@@ -73,8 +73,25 @@ describe('acts', () => {
         params: { name: 'grp' },
       });
     }
+    await expect(
+      study.upload('subject,day,weight,Kestrel drill\nQ01,90,70,1\nQ02,90,70,0\n'),
+    ).rejects.toMatchObject({ code: 'file_arm_names', params: { name: 'Kestrel drill' } });
     expect(await held()).toEqual(before);
     expect(study.store.objects.size).toBe(objects);
+  });
+
+  it('refuse a file named for an arm, since its name stands beside each of its readings', async () => {
+    const before = await held();
+    const text = 'subject,day,weight\nQ01,90,70\n';
+    for (const name of ['weights_PLOVER-drill.csv', 'Kestrel drill.csv']) {
+      await expect(study.upload(text, 'weight', name)).rejects.toMatchObject({
+        code: 'import_file_named_for_arm',
+      });
+    }
+    expect(await held()).toEqual(before);
+    // Half of a name, or letters inside another word, are no arm.
+    const view = await study.upload(text, 'weight', 'drill week, kestreldrills.csv');
+    expect(view.state).toBe('uploaded');
   });
 });
 

@@ -230,6 +230,8 @@ export const importProblems: ProblemSentences = {
   file_arm_names:
     'Column “{name}” holds arm names of this masked study. Nothing was stored. Remove the column and upload the file again.',
   import_file_missing: 'Choose a file.',
+  import_file_named_for_arm:
+    'The name of the file holds an arm name of this masked study. Nothing was stored. Rename the file and upload it again.',
   import_file_too_large:
     'The file is larger than {megabytes} MB. Split it and import the parts one after the other.',
   import_measure_unknown: 'This study has no such measure any more. Choose one of the list.',

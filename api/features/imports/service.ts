@@ -49,7 +49,9 @@ export async function uploadImport(context: ImportContext, upload: Upload): Prom
   const measure = measures[0];
   if (!measure)
     throw new Problem('import_measure_unknown', {}, { errors: [{ path: 'measure', message: '' }] });
-  const inspection = await inspect(context, upload.path);
+  const secretNames = await armNames(context);
+  refuseNamedForArm(upload.name, secretNames);
+  const inspection = await inspect(context, upload.path, secretNames);
   const hash = await sha256OfFile(upload.path);
   const key = `imports/${randomUUID()}`;
   await deps.store.put(key, createReadStream(upload.path), { size: upload.size, type: 'text/csv' });
@@ -90,8 +92,19 @@ async function armNames({ db, membership }: ImportContext): Promise<string[]> {
   return arms.map((arm) => arm.name);
 }
 
-async function inspect(context: ImportContext, path: string) {
-  const secretNames = await armNames(context);
+/** The name of a file stands beside every reading that came with it, so it may not tell an arm either. */
+function refuseNamedForArm(fileName: string, secretNames: readonly string[]): void {
+  const wordsOf = (text: string) =>
+    ` ${text
+      .toLowerCase()
+      .match(/[\p{L}\p{N}]+/gu)
+      ?.join(' ')} `;
+  if (secretNames.some((name) => wordsOf(fileName).includes(wordsOf(name)))) {
+    throw new Problem('import_file_named_for_arm', {}, { errors: [{ path: 'file', message: '' }] });
+  }
+}
+
+async function inspect(context: ImportContext, path: string, secretNames: string[]) {
   try {
     return await context.deps.importThreads.inspect({ path, secretNames });
   } catch (error) {
