@@ -5,6 +5,18 @@ const n = z.number();
 const maybe = n.nullable();
 const interval = z.looseObject({ estimate: n, lower: maybe, upper: maybe });
 
+/** Why a subject has no line of its own. */
+export const notFittedCodes = ['one_reading', 'one_time'] as const;
+
+/** English for scripts, and codes for pages, which have words of their own. */
+export const adviceSchema = z.object({
+  fit: z.string(),
+  why: z.string(),
+  unless: z.string(),
+  codes: z.object({ fit: z.string(), why: z.string(), unless: z.string() }),
+  params: z.record(z.string(), z.union([z.string(), z.number()])),
+});
+
 export const structureSchema = z.looseObject({
   subjects: n,
   readings: n,
@@ -115,7 +127,9 @@ export const analysisResultSchema = z.looseObject({
   per_subject: z
     .looseObject({
       lines: z.array(ownLineSchema),
-      not_fitted: z.array(z.object({ subject: z.string(), reason: z.string() })),
+      not_fitted: z.array(
+        z.object({ subject: z.string(), reason: z.string(), code: z.enum(notFittedCodes) }),
+      ),
       mean_slope: maybe,
       sd_slope: maybe,
       mean_slope_lower: maybe,
@@ -128,6 +142,5 @@ export const analysisResultSchema = z.looseObject({
       wild_bootstrap: z.record(z.string(), wildBootstrapSchema).nullable(),
     })
     .nullable(),
-  advice: z.array(z.object({ fit: z.string(), why: z.string(), unless: z.string() })),
+  advice: z.array(adviceSchema),
 });
-export type AnalysisResultView = z.infer<typeof analysisResultSchema>;

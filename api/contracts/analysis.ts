@@ -1,6 +1,11 @@
 /** The independence check, the lock on the ordinary fit, fits, and the records they leave. */
 import { z } from 'zod';
-import { analysisResultSchema, independenceSchema, structureSchema } from './analysis-result.ts';
+import {
+  adviceSchema,
+  analysisResultSchema,
+  independenceSchema,
+  structureSchema,
+} from './analysis-result.ts';
 import { cutMeasureSchema, cutSummarySchema } from './cuts.ts';
 
 /** What a specification is made of, beside its cut. Weeks are days divided by seven. */
@@ -74,7 +79,7 @@ export const checkSchema = z.object({
   consequences: z.array(consequenceSchema),
   observed: z.array(residualsOfSubjectSchema),
   dealt: z.array(residualsOfSubjectSchema),
-  advice: z.array(z.object({ fit: z.string(), why: z.string(), unless: z.string() })),
+  advice: z.array(adviceSchema),
   /** `count`: a straight line through counts. `censored`: readings beyond a limit are left out. */
   cautions: z.array(z.object({ code: z.enum(['count', 'censored']) })),
   /** Whether an ordinary straight line is locked for this person, and what opened it. */

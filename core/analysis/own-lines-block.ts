@@ -31,6 +31,7 @@ export function ownLinesBlock(
     not_fitted: own.notFitted.map(({ subject, reason }) => ({
       subject: subjects[subject]!,
       reason: notFittedWords[reason],
+      code: reason,
     })),
     ...nullable('mean_slope', orReason(summary.mean, noMean)),
     ...nullable('sd_slope', orReason(summary.sd, noSpread)),

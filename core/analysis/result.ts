@@ -1,5 +1,7 @@
 import type { WildWeights } from '../cluster/wild-weights.ts';
 import type { Verdict } from '../independence/verdict.ts';
+import type { NotFittedReason } from '../lines/own-lines.ts';
+import type { AdviceText } from '../words/advice.ts';
 
 /**
  * The result `tetherline-analysis/1`: pure JSON, no dates, no times, never NaN or Infinity. What can't be given is
@@ -156,7 +158,7 @@ export interface OwnLineBlock {
 
 export interface OwnLinesBlock {
   lines: OwnLineBlock[];
-  not_fitted: { subject: string; reason: string }[];
+  not_fitted: { subject: string; reason: string; code: NotFittedReason }[];
   mean_slope: number | null;
   mean_slope_reason?: string;
   sd_slope: number | null;
@@ -238,8 +240,4 @@ export interface WithinBetweenBlock {
   difference_reason?: string;
 }
 
-export interface Advice {
-  fit: string;
-  why: string;
-  unless: string;
-}
+export type Advice = AdviceText;

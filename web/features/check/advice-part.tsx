@@ -3,6 +3,7 @@ import { useStudy } from '../../app/session.ts';
 import { questionQuery } from '../../app/specification-address.ts';
 import { ButtonLink } from '../../components/button.tsx';
 import { Section } from '../../components/page.tsx';
+import { adviceWords } from '../../words/advice.ts';
 import { words } from '../../words/en.ts';
 import type { PartProps } from './part-props.ts';
 
@@ -13,7 +14,7 @@ export function AdvicePart({ check, question }: PartProps) {
   return (
     <Section heading={text.partHeadings.advice}>
       <ol className="border-t border-line">
-        {check.advice.map((advice, index) => (
+        {check.advice.map(adviceWords).map((advice, index) => (
           <li key={advice.fit} className="flex gap-4 border-b border-line py-3">
             <span className="figure w-5 shrink-0 text-faded">{index + 1}</span>
             <div>

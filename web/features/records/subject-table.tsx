@@ -12,6 +12,7 @@ import {
   formatNumber,
 } from '../../components/numbers.ts';
 import { Section } from '../../components/page.tsx';
+import { notFittedWords } from '../../words/advice.ts';
 import { slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { groupsOf } from './headline.ts';
@@ -38,7 +39,10 @@ type Row = {
 function rowsOf({ picture, result }: RecordDetail): Row[] {
   const own = new Map((result.per_subject?.lines ?? []).map((line) => [line.subject, line]));
   const why = new Map(
-    (result.per_subject?.not_fitted ?? []).map(({ subject, reason }) => [subject, reason]),
+    (result.per_subject?.not_fitted ?? []).map(({ subject, code }) => [
+      subject,
+      notFittedWords[code],
+    ]),
   );
   return picture.subjects.map((subject) => {
     const line = own.get(subject.code);
