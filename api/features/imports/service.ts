@@ -94,11 +94,10 @@ async function armNames({ db, membership }: ImportContext): Promise<string[]> {
 
 /** The name of a file stands beside every reading that came with it, so it may not tell an arm either. */
 function refuseNamedForArm(fileName: string, secretNames: readonly string[]): void {
-  const wordsOf = (text: string) =>
-    ` ${text
-      .toLowerCase()
-      .match(/[\p{L}\p{N}]+/gu)
-      ?.join(' ')} `;
+  const wordsOf = (text: string) => {
+    const found = text.toLowerCase().match(/[\p{L}\p{N}]+/gu) ?? [];
+    return ` ${found.join(' ')} `;
+  };
   if (secretNames.some((name) => wordsOf(fileName).includes(wordsOf(name)))) {
     throw new Problem('import_file_named_for_arm', {}, { errors: [{ path: 'file', message: '' }] });
   }
