@@ -6,6 +6,8 @@ import type { Choice } from '../select.tsx';
 export type Column<Row> = {
   id: string;
   heading: string;
+  /** The heading in the exported file, where scripts look for a fixed name. */
+  exportHeading?: string;
   /** Stands under the heading: the axis of a picture in the cells. */
   headingExtra?: ReactNode;
   /** Stands after the heading, and in the heading of the exported file. */

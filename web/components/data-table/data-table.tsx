@@ -135,7 +135,7 @@ export function DataTable<Row extends AnyRow>(props: DataTableProps<Row>) {
     saveFile(
       `${props.name}.csv`,
       toCsv([
-        exported.map(headingOf),
+        exported.map((column) => column.exportHeading ?? headingOf(column)),
         ...all.map((row) => exported.map((column) => column.value(row))),
       ]),
     );

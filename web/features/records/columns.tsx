@@ -86,6 +86,7 @@ export function columnsOf(study: string): Column<RecordSummary>[] {
     {
       id: 'stamp',
       heading: names.stamp,
+      exportHeading: 'stamp',
       value: (row) => row.stamp,
       cell: (row) =>
         row.stamp ? (

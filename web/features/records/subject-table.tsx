@@ -79,6 +79,7 @@ function columnsOf(record: RecordDetail, rows: readonly Row[]): Column<Row>[] {
         {
           id: 'stamp',
           heading: text.columns.stamp,
+          exportHeading: 'stamp',
           value: () => record.stamp,
           cell: () => <strong className="text-13 text-flare-ink">{record.stamp}</strong>,
           fixed: true,
