@@ -142,7 +142,10 @@ export async function settled(page: Page): Promise<void> {
 
 /** Opens a list of choices by its label and takes one. */
 export async function choose(page: Page, label: string, option: string): Promise<void> {
-  await page.getByRole('button', { name: label }).click();
+  await page
+    .getByRole('button', { name: label })
+    .and(page.locator('[aria-haspopup=listbox]'))
+    .click();
   await page.getByRole('option', { name: option }).click();
   await page.getByRole('listbox').waitFor({ state: 'detached' });
 }
