@@ -122,13 +122,17 @@ describe.each(Object.entries(PLACES) as [DemoRole, readonly Place[]][])(
     });
 
     if (places.length > 0)
-      it.each(places)('opens %s, and what opens from it, without a fault', async (place) => {
-        await goTo(visitor.page, place);
-        await expectWhole(visitor);
-        const open = OPENS[place];
-        if (!open) return;
-        await open(visitor.page);
-        await expectWhole(visitor);
-      });
+      it.each(places)(
+        'opens %s, and what opens from it, without a fault',
+        async (place) => {
+          await goTo(visitor.page, place);
+          await expectWhole(visitor);
+          const open = OPENS[place];
+          if (!open) return;
+          await open(visitor.page);
+          await expectWhole(visitor);
+        },
+        SLOW_MS,
+      );
   },
 );
