@@ -13,8 +13,9 @@ export const adviceSchema = z.object({
   fit: z.string(),
   why: z.string(),
   unless: z.string(),
-  codes: z.object({ fit: z.string(), why: z.string(), unless: z.string() }),
-  params: z.record(z.string(), z.union([z.string(), z.number()])),
+  /** Records keep what they were given: an older one may hold the English alone. */
+  codes: z.object({ fit: z.string(), why: z.string(), unless: z.string() }).optional(),
+  params: z.record(z.string(), z.union([z.string(), z.number()])).optional(),
 });
 
 export const structureSchema = z.looseObject({
@@ -128,7 +129,11 @@ export const analysisResultSchema = z.looseObject({
     .looseObject({
       lines: z.array(ownLineSchema),
       not_fitted: z.array(
-        z.object({ subject: z.string(), reason: z.string(), code: z.enum(notFittedCodes) }),
+        z.object({
+          subject: z.string(),
+          reason: z.string(),
+          code: z.enum(notFittedCodes).optional(),
+        }),
       ),
       mean_slope: maybe,
       sd_slope: maybe,

@@ -43,6 +43,7 @@ describe('the built pages over the demo', () => {
       await signInAs(visitor, role);
       await visitor.page.getByRole('main').waitFor();
       await visitor.page.waitForLoadState('networkidle');
+      await visitor.page.getByRole('heading', { level: 1 }).waitFor();
       expect(new URL(visitor.page.url()).pathname).not.toBe('/sign-in');
       await expectNoAxeViolations(visitor.page);
       visitor.expectNoComplaints();

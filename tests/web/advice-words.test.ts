@@ -7,7 +7,7 @@ import {
   ownLinesAdvice,
   pooledAdvice,
 } from '../../core/words/advice.ts';
-import { adviceCodes, adviceWords, notFittedWords } from '../../web/words/advice.ts';
+import { adviceCodes, adviceWords, notFittedCodes } from '../../web/words/advice.ts';
 
 const facts = {
   subjects: 18,
@@ -39,7 +39,12 @@ describe('advice in words', () => {
       const used = [...new Set(given.map(({ codes }) => codes[part]))].sort();
       expect(used).toEqual([...adviceCodes[part]].sort());
     }
-    expect(Object.keys(notFittedWords)).toEqual(Object.keys(engineNotFitted));
+    expect(notFittedCodes).toEqual(Object.keys(engineNotFitted));
+  });
+
+  it('keeps the English of a record that holds nothing else', () => {
+    const { codes: _codes, params: _params, ...older } = pooledAdvice(facts);
+    expect(adviceWords(older)).toEqual(older);
   });
 
   it('says the numbers of the engine', () => {

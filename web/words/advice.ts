@@ -51,13 +51,14 @@ type Advice = {
   fit: string;
   why: string;
   unless: string;
-  codes: { fit: string; why: string; unless: string };
-  params: Params;
+  codes?: { fit: string; why: string; unless: string };
+  params?: Params;
 };
 
 /** The three sentences of one piece of advice; a code without words here keeps the engine’s own. */
 export function adviceWords(advice: Advice): { fit: string; why: string; unless: string } {
-  const { codes, params } = advice;
+  const { codes, params = {} } = advice;
+  if (!codes) return advice;
   return {
     fit: fits[codes.fit]?.(params) ?? advice.fit,
     why: whys[codes.why]?.(params) ?? advice.why,
@@ -73,7 +74,13 @@ export const adviceCodes = {
 };
 
 /** Why a subject has no line of its own. */
-export const notFittedWords = {
+const notFitted = {
   one_reading: 'one reading',
   one_time: 'all readings at one time',
 } as const;
+
+export const notFittedCodes = Object.keys(notFitted);
+
+export function notFittedReason(line: { code?: keyof typeof notFitted; reason: string }): string {
+  return line.code ? notFitted[line.code] : line.reason;
+}

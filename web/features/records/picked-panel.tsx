@@ -7,7 +7,7 @@ import { cordScale } from '../../charts/cord/geometry.ts';
 import type { CordVisit } from '../../charts/cord/types.ts';
 import { Button } from '../../components/button.tsx';
 import { formatCount, formatError, formatEstimate, formatLoose } from '../../components/numbers.ts';
-import { notFittedWords } from '../../words/advice.ts';
+import { notFittedReason } from '../../words/advice.ts';
 import { slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import type { RecordPartProps } from './part-props.ts';
@@ -89,7 +89,7 @@ export function PickedPanel({ record, picked, onPick }: RecordPartProps) {
         {why ? (
           <div className="border-b border-line py-1.5">
             <dt className="inline text-faded">{text.subjectColumns.why}:</dt>{' '}
-            <dd className="inline">{notFittedWords[why.code]}</dd>
+            <dd className="inline">{notFittedReason(why)}</dd>
           </div>
         ) : null}
       </dl>

@@ -12,7 +12,7 @@ import {
   formatNumber,
 } from '../../components/numbers.ts';
 import { Section } from '../../components/page.tsx';
-import { notFittedWords } from '../../words/advice.ts';
+import { notFittedReason } from '../../words/advice.ts';
 import { slopeUnit } from '../../words/analysis.ts';
 import { words } from '../../words/en.ts';
 import { groupsOf } from './headline.ts';
@@ -39,10 +39,7 @@ type Row = {
 function rowsOf({ picture, result }: RecordDetail): Row[] {
   const own = new Map((result.per_subject?.lines ?? []).map((line) => [line.subject, line]));
   const why = new Map(
-    (result.per_subject?.not_fitted ?? []).map(({ subject, code }) => [
-      subject,
-      notFittedWords[code],
-    ]),
+    (result.per_subject?.not_fitted ?? []).map((line) => [line.subject, notFittedReason(line)]),
   );
   return picture.subjects.map((subject) => {
     const line = own.get(subject.code);
