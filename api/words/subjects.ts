@@ -12,6 +12,12 @@ export const subjectProblems = defineProblems({
     title: 'No such subject',
     detail: 'No subject {subject} that you may see. Check the code.',
   },
+  subject_code_form: {
+    status: 422,
+    title: 'Not a subject code',
+    detail:
+      '{subject} is not a subject code. Use 1 to 32 letters, digits, dots, underscores and hyphens, a letter or digit first.',
+  },
   subject_code_taken: {
     status: 409,
     title: 'Code in use',

@@ -79,6 +79,7 @@ describe('enrolling', () => {
     ['subject_consent_missing', { consentDate: null }],
     ['subject_date_future', { consentDate: '2026-12-02', baselineDate: null }],
     ['subject_date_future', { baselineDate: '2026-12-02' }],
+    ['subject_code_form', { code: '=A1' }],
     ['subject_before_consent', { baselineDate: '2026-09-27' }],
     ['subject_before_consent', { enrolmentDate: '2026-09-27' }],
   ])('is refused with %s for %j, and nothing stays', async (problem, over) => {

@@ -3,6 +3,8 @@ import type { ProblemSentences } from './problems.ts';
 
 export const entryProblems: ProblemSentences = {
   subject_unknown: 'No subject {subject} that you may see. Check the code.',
+  subject_code_form:
+    '{subject} is not a subject code. Use 1 to 32 letters, digits, dots, underscores and hyphens, a letter or digit first.',
   subject_code_taken:
     'The study has a subject {subject} already. Check the code, or choose another.',
   subject_site_unknown: 'No site {site} that you work for. Choose one of your sites.',

@@ -1,5 +1,6 @@
 /** Enrolling subjects and changing their state. */
 import { Site, Subject } from '../../../database/entities/index.ts';
+import { codeSchema } from '../../contracts/setup.ts';
 import type { SubjectState } from '../../contracts/subjects.ts';
 import { Problem } from '../../http/problems.ts';
 import { holdSubject } from './find-subject.ts';
@@ -21,6 +22,9 @@ export interface EnrolSubjectInput {
 /** @throws Problem `subject_site_unknown`, `subject_code_taken`, or what is wrong with a date */
 export async function enrolSubject(act: StudyAct, input: EnrolSubjectInput): Promise<Subject> {
   const { manager } = act.tx;
+  if (!codeSchema.safeParse(input.code).success) {
+    throw new Problem('subject_code_form', { subject: input.code });
+  }
   const site = await manager
     .getRepository(Site)
     .findOneBy({ studyId: act.study.id, code: input.siteCode });
