@@ -85,6 +85,10 @@ function complaint(error: unknown, file: string | null): string | null {
 }
 
 function main(args: readonly string[]): void {
+  if (args.includes('--help')) {
+    process.stdout.write(commandWords.help());
+    return;
+  }
   let file: string | null = null;
   try {
     const asked = readArguments(args);

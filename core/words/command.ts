@@ -29,6 +29,21 @@ function shortened(text: string): string {
 
 /** English of bad use of the headless command; each is one line. */
 export const commandWords = {
+  help: () =>
+    [
+      'analyse FILE.csv --subject COLUMN --time COLUMN --response COLUMN [options]',
+      '',
+      'Prints the analysis of a long CSV as one JSON document, tetherline-analysis/1.',
+      '',
+      '  --group COLUMN        time by group; the reference is the first level in plain order',
+      '  --seed NUMBER         seed of every random procedure; 1 when left out',
+      '  --draws NUMBER        draws of the wild bootstrap and the permutations; 1999 when left out',
+      '  --acknowledge REASON  opens the ordinary straight line where subjects repeat',
+      '  --only PARTS          check, ols, lines, cr, wild, lmm, gee, within, assumptions; comma-separated',
+      '  --timings             milliseconds by part, as the last line on standard error',
+      '  --out FILE            writes the result there',
+      '',
+    ].join('\n'),
   usage: () =>
     'Give one CSV file: analyse FILE.csv --subject COLUMN --time COLUMN --response COLUMN.',
   missingOption: (name: string) => `--${name} is missing. Name the column of the file.`,

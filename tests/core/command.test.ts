@@ -280,6 +280,25 @@ describe('running it', () => {
     expect(last.total!).toBeGreaterThanOrEqual(last.cr2!);
   });
 
+  test.concurrent('--help names every option on standard output', async () => {
+    const { code, stdout, stderr } = await command('--help');
+    expect([code, stderr]).toEqual([0, '']);
+    for (const option of [
+      'subject',
+      'time',
+      'response',
+      'group',
+      'seed',
+      'draws',
+      'acknowledge',
+      'only',
+      'timings',
+      'out',
+    ]) {
+      expect(stdout).toContain(`--${option} `);
+    }
+  });
+
   test.concurrent('--only leaves the others null with a reason', async () => {
     const result = answerOf(await command(sleep, ...columns, '--only', 'cr'));
     expect(pooledOf(result, 'time').se_cr2).toBeCloseTo(1.7293040004895281, 8);
